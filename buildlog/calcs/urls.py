@@ -1,0 +1,5 @@
+"""Pages of this room."""
+
+from django.urls import URLPattern
+
+urlpatterns: list[URLPattern] = []

@@ -1,0 +1,1 @@
+"""SQLite as this record needs it."""
