@@ -86,8 +86,10 @@ def _read_slots(row: Table) -> tuple[Slot, ...]:
         method = line.text("method", "") or None
         slots.append(Slot(line.text("key"), kind, line.text("title"), line.yes("required", True), method))
         line.done()
-        if (kind == "snapshot") != bool(method):
-            raise line.wrong("'method' belongs to a snapshot, and a snapshot needs one")
+        if kind == "snapshot" and not method:
+            raise line.wrong("a snapshot names its 'method'")
+        if method and kind not in ("snapshot", "trial"):
+            raise line.wrong("'method' belongs to a snapshot or a trial")
     once("slot", [slot.key for slot in slots])
     return tuple(slots)
 

@@ -53,7 +53,7 @@ class ProfileError(Exception):
 
 @dataclass(frozen=True)
 class Slot:
-    """One piece of evidence a check asks for; `method` only where a calculation is asked for."""
+    """One piece of evidence a check asks for; `method` for a snapshot, and for a trial judged by one method."""
 
     key: str
     kind: SlotKind
@@ -65,6 +65,16 @@ class Slot:
     def need(self) -> str:
         """The need in one word, `snapshot:fuel-flow` or `photo`."""
         return f"{self.kind}:{self.method}" if self.method else self.kind
+
+    @property
+    def accepts(self) -> tuple[SlotKind, ...]:
+        """The kinds of evidence that can fill it.
+
+        A trial that no method judges is a test sheet of the builder's own: an entry or a scanned sheet serves too.
+        """
+        if self.kind == "trial" and not self.method:
+            return ("trial", "entry", "document")
+        return (self.kind,)
 
 
 @dataclass(frozen=True)
