@@ -27,12 +27,16 @@ def write(
     about: Record | None,
     text: str,
     rows: Sequence[Record] = (),
+    removed: Sequence[Record] = (),
     facts: Mapping[str, Any] | None = None,
+    at: dt.datetime | None = None,
 ) -> Event:
     """Append one event to the chain of `aircraft` (None: the site's chain) and return it.
 
     about: the row the event is about; it and every one of `rows` is copied whole into the body.
+    removed: rows of an open draft that the act took out again (a labour line); named, so that verify expects none.
     text: the sentence a person reads in the trail, without the actor's name: "logged 1 h 30: fitted rib 5".
+    at: the moment of the act where it is not now (tests, and the invented past of the demo aircraft).
     Must run inside the transaction of the act it records.
     """
     if not connection.in_atomic_block:
@@ -43,12 +47,15 @@ def write(
         "rows": [{"model": type(row).__name__, "fields": row.as_recorded()} for row in touched],
         "facts": canonical.plain(facts or {}),
     }
+    if removed:
+        body["removed"] = [{"model": type(row).__name__, "id": str(row.pk)} for row in removed]
     return _append(
         chain=aircraft.id if aircraft else SITE_CHAIN,
         kind=kind,
         body=body,
         subject=about.id if about is not None else None,
         actor=by.id if by else None,
+        at=at,
     )
 
 
@@ -60,6 +67,7 @@ def _append(
     subject: UUID | None,
     actor: UUID | None,
     ref_seq: int | None = None,
+    at: dt.datetime | None = None,
 ) -> Event:
     last = Event.objects.filter(chain=chain).order_by("-seq").values_list("seq", "hash").first()
     salt, spelled = secrets.token_hex(16), canonical.encode(body)
@@ -70,7 +78,7 @@ def _append(
         subject=subject,
         ref_seq=ref_seq,
         actor=actor,
-        at=canonical.moment(timezone.now()),
+        at=canonical.moment(at or timezone.now()),
         body=body_digest(salt, spelled),
         prev=last[1] if last else NO_PREVIOUS,
     )
@@ -126,7 +134,6 @@ def withdraw(
         by_name=by.name,
         at=at or timezone.now(),
     )
-    write(
-        aircraft=aircraft, by=by, kind=f"{kind}.withdrawn", about=row, text=f"withdrew {kind}: {reason.strip()[:120]}"
-    )
+    text = f"withdrew {kind}: {reason.strip()[:120]}"
+    write(aircraft=aircraft, by=by, kind=f"{kind}.withdrawn", about=row, text=text, at=at)
     return row
