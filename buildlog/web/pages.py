@@ -7,7 +7,7 @@ from urllib.parse import urlsplit
 
 from django.http import HttpRequest, HttpResponse
 from django.shortcuts import render
-from django.urls import reverse
+from django.urls import NoReverseMatch, reverse
 
 from buildlog.aircraft.models import Aircraft
 from buildlog.aircraft.roles import Act, may
@@ -59,15 +59,18 @@ def frame(request: HttpRequest) -> dict[str, Any]:
     base = {"light": light if light in LIGHTS else "", "aircraft": aircraft, "member": getattr(request, "member", None)}
     if aircraft is None:
         return base
-    rail = [[_way(request, aircraft, title, name) for title, name in group] for group in RAIL]
-    tabs = [_way(request, aircraft, title, name, icon) for title, name, icon in TABS]
+    rail = [[way for title, name in group if (way := _way(request, aircraft, title, name))] for group in RAIL]
+    tabs = [way for title, name, icon in TABS if (way := _way(request, aircraft, title, name, icon))]
     role = request.member.role  # type: ignore[attr-defined]
     rights = {act.value: may(role, act) for act in Act}
     return {**base, "rail_groups": rail, "tabs": tabs, "may": rights}
 
 
-def _way(request: HttpRequest, aircraft: Aircraft, title: str, name: str, icon: str = "") -> Way:
-    url = reverse(name, args=[aircraft.id])
+def _way(request: HttpRequest, aircraft: Aircraft, title: str, name: str, icon: str = "") -> Way | None:
+    try:
+        url = reverse(name, args=[aircraft.id])
+    except NoReverseMatch:
+        return None
     here = request.path == url or (name not in {"bench", "aircraft-page"} and request.path.startswith(url))
     return Way(title, url, here, icon)
 

@@ -92,8 +92,8 @@ def test_an_anchor_kept_elsewhere_shows_a_rewritten_chain(aircraft):
         "DELETE FROM ledger_event",
         "UPDATE ledger_body SET body = '{}'",
         "DELETE FROM ledger_body",
-        "INSERT OR REPLACE INTO ledger_event SELECT id, chain, seq, v, 'x', subject, ref_seq, actor, at, body, prev, hash"
-        " FROM ledger_event WHERE seq = 1",
+        "INSERT OR REPLACE INTO ledger_event SELECT id, chain, seq, v, 'x', subject, ref_seq, actor, at, body, prev,"
+        " hash FROM ledger_event WHERE seq = 1",
         "INSERT INTO ledger_event (chain, seq, v, kind, at, body, prev, hash)"
         " SELECT chain, 99, 1, 'x', at, body, prev, 'f' FROM ledger_event WHERE seq = 1",
         "UPDATE ledger_event SET seq = seq + 100",
