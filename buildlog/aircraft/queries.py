@@ -1,11 +1,18 @@
 """Who may see which aircraft, and as what."""
 
+import datetime as dt
+import hashlib
+from dataclasses import dataclass, field
 from uuid import UUID
 
+from django.contrib.auth import SESSION_KEY
+from django.contrib.sessions.models import Session
 from django.utils import timezone
 
-from buildlog.aircraft.models import Aircraft, Member, ReviewLink, User
+from buildlog.aircraft.models import Aircraft, Fact, Invitation, Member, ReviewLink, User
 from buildlog.aircraft.roles import Role
+from buildlog.profiles import load
+from buildlog.profiles.conditions import FactValue
 
 
 def membership(*, user: User, aircraft_id: UUID) -> Member | None:
@@ -41,3 +48,78 @@ def people_of(aircraft: Aircraft) -> list[Member]:
     order = {role.value: place for place, role in enumerate(Role)}
     rows = aircraft.members.select_related("user").filter(ended_on=None)
     return sorted(rows, key=lambda member: (order[member.role], member.user.name))
+
+
+def past_people_of(aircraft: Aircraft) -> list[Member]:
+    """Return the memberships that have ended, the latest first."""
+    return list(aircraft.members.select_related("user").exclude(ended_on=None).order_by("-ended_on", "-id"))
+
+
+def invitations_of(aircraft: Aircraft) -> list[Invitation]:
+    """Return the invitations that can still be taken up."""
+    open_ones = aircraft.invitations.filter(taken_by=None, revoked_at=None, expires_at__gt=timezone.now())
+    return list(open_ones.order_by("-made_at"))
+
+
+def review_links_of(aircraft: Aircraft) -> list[ReviewLink]:
+    """Return the reviewers' links that still open."""
+    open_ones = aircraft.review_links.filter(revoked_at=None, expires_at__gt=timezone.now())
+    return list(open_ones.select_related("made_by").order_by("-made_at"))
+
+
+def fact_rows(aircraft: Aircraft) -> dict[str, Fact]:
+    """Return the last row of each fact ever stated, by key."""
+    return {row.key: row for row in Fact.objects.present().filter(aircraft=aircraft).select_related("by")}
+
+
+def stated(aircraft: Aircraft) -> dict[str, FactValue]:
+    """Return the facts of this conversion as `load.applies` reads them: bool, whole number or text; unset left out."""
+    return values_of(fact_rows(aircraft))
+
+
+def values_of(rows: dict[str, Fact]) -> dict[str, FactValue]:
+    """Return kept facts as values; a fact the profiles no longer ask for is left out."""
+    known = load.facts()
+    return {key: _value(known[key].kind, row.value) for key, row in rows.items() if row.value and key in known}
+
+
+def _value(kind: str, spelled: str) -> FactValue:
+    if kind == "yes_no":
+        return spelled == "yes"
+    return int(spelled) if kind == "count" else spelled
+
+
+def stated_at(aircraft: Aircraft) -> dict[str, dt.datetime]:
+    """Return when each fact was last said."""
+    return {key: row.at for key, row in fact_rows(aircraft).items()}
+
+
+@dataclass(frozen=True)
+class SignedIn:
+    """One device on which a person is signed in. `mark` names it on a page; its key never leaves the server."""
+
+    mark: str
+    device: str
+    since: dt.datetime | None
+    seen: dt.datetime | None
+    key: str = field(repr=False)
+
+
+def sessions_of(user: User) -> list[SignedIn]:
+    """Return where this person is signed in, the latest first.
+
+    The sessions' table knows no persons, so every open session of the site is read: tens, for a workshop.
+    """
+    found = []
+    for row in Session.objects.filter(expire_date__gt=timezone.now()):
+        told = row.get_decoded()
+        if told.get(SESSION_KEY) == str(user.pk):
+            mark = hashlib.sha256(f"session-mark/1\n{row.session_key}".encode()).hexdigest()[:16]
+            device = told.get("device", "a device")
+            times = [_moment(told.get(name)) for name in ("signed_in_at", "seen_at")]
+            found.append(SignedIn(mark, device, times[0], times[1], row.session_key))
+    return sorted(found, key=lambda one: (one.seen is not None, one.seen), reverse=True)
+
+
+def _moment(seconds: int | None) -> dt.datetime | None:
+    return dt.datetime.fromtimestamp(seconds, tz=dt.UTC) if seconds else None

@@ -57,3 +57,17 @@ RIGHTS: dict[Act, frozenset[Role]] = {
 def may(role: str, act: Act) -> bool:
     """Return whether a role has the right to an act."""
     return Role(role) in RIGHTS[act]
+
+
+# Parts of the record that a reviewer's link may open: the word a page's rule names, and the word a person reads.
+CHAPTERS = {
+    "log": "Log: tasks and entries",
+    "photos": "Photos and documents",
+    "parts": "Parts and batches",
+    "readings": "Readings",
+    "calculations": "Calculations and trials",
+    "checks": "Checks, conversion and sign-offs",
+    "weights": "Weight and balance",
+    "findings": "Squawks and deviations",
+    "binder": "Binders",
+}
