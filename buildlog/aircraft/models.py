@@ -87,6 +87,9 @@ class Member(Record):
     started_on = models.DateField()
     ended_on = models.DateField(null=True)
 
+    # What a reviewer by link may read; None for members, who read everything.
+    chapters: frozenset[str] | None = None
+
     class Meta:
         constraints = [
             models.UniqueConstraint(

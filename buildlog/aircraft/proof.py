@@ -3,12 +3,16 @@
 from collections.abc import Callable
 from typing import TypeVar
 
+from django.contrib.auth import authenticate
+
 from buildlog.aircraft import actions
+from buildlog.aircraft.actions.people import plain_sign_in
 from buildlog.aircraft.actions.second_step import WRONG_CODE
 from buildlog.aircraft.models import User
 from buildlog.errors import Refused
 
 T = TypeVar("T")
+WRONG_PAIR = "This sign-in and password do not belong together. Nothing is locked; try again."
 WRONG_PASSWORD = "This is not your password. Type it again."
 
 
@@ -28,6 +32,27 @@ def fresh_proof(user: User, password: str, code: str, network: str) -> str:
     return "password and code" if user.totp_secret else "password"
 
 
+def check_password(sign_in: str, password: str, network: str) -> User:
+    """Return the person whose password this is: the first step of a sign-in, or all of it without a second step."""
+    account = plain_sign_in(sign_in)
+    actions.begin_try(account=account, network=network)
+    user = authenticate(None, username=account, password=password)
+    if not isinstance(user, User):
+        raise Refused(WRONG_PAIR)
+    if not user.totp_secret:
+        actions.forget_tries(account=account, network=network)
+    return user
+
+
+def check_code(user: User, code: str, network: str) -> bool:
+    """Return True for the right code: the second step of a sign-in."""
+    actions.begin_try(account=user.sign_in, network=network, field="one_time_code")
+    if not actions.spend_code(user=user, code=code):
+        raise Refused(WRONG_CODE, field="one_time_code")
+    actions.forget_tries(account=user.sign_in, network=network, steps=2)
+    return True
+
+
 def proven(action: Callable[..., T], *, user: User, network: str) -> Callable[..., T]:
     """Return `action` asking first for password and code, and given the way of proof as `proof`."""
 
@@ -36,3 +61,20 @@ def proven(action: Callable[..., T], *, user: User, network: str) -> Callable[..
         return action(proof=proof, **given)
 
     return prove_and_act
+
+
+def slowed(action: Callable[..., T], *, account: str, network: str, field: str) -> Callable[..., T]:
+    """Return `action`, which looks at a code in `field`, with a growing wait after each wrong code."""
+
+    def try_and_act(**given: object) -> T:
+        actions.begin_try(account=account, network=network, field=field)
+        try:
+            done = action(**given)
+        except Refused as refusal:
+            if refusal.field != field:  # the code was right, something else was not
+                actions.forget_tries(account=account, network=network)
+            raise
+        actions.forget_tries(account=account, network=network)
+        return done
+
+    return try_and_act

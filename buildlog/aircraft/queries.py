@@ -9,7 +9,7 @@ from django.contrib.auth import SESSION_KEY
 from django.contrib.sessions.models import Session
 from django.utils import timezone
 
-from buildlog.aircraft.models import Aircraft, Fact, Invitation, Member, ReviewLink, User
+from buildlog.aircraft.models import Aircraft, Fact, Invitation, Member, ReviewLink, Section, User
 from buildlog.aircraft.roles import Role
 from buildlog.profiles import load
 from buildlog.profiles.conditions import FactValue
@@ -24,6 +24,16 @@ def membership(*, user: User, aircraft_id: UUID) -> Member | None:
     )
 
 
+def is_empty_site() -> bool:
+    """Return whether nobody has an account yet."""
+    return not User.objects.exists()
+
+
+def user_of(user_id: str) -> User | None:
+    """Return the person with this id, if the account is in use."""
+    return User.objects.filter(id=user_id, is_active=True).first()
+
+
 def review_membership(link_id: str | None, aircraft_id: UUID, chapter: str) -> Member | None:
     """Return a reviewer by link as an unsaved member, or None when the link does not open this part of the record."""
     if not link_id:
@@ -35,12 +45,38 @@ def review_membership(link_id: str | None, aircraft_id: UUID, chapter: str) -> M
     )
     if link is None or (chapter and chapter not in link.chapters):
         return None
-    return Member(aircraft=link.aircraft, role=Role.LINK, authority=link.name)
+    visitor = Member(aircraft=link.aircraft, role=Role.LINK, authority=link.name)
+    visitor.chapters = frozenset(link.chapters)
+    return visitor
 
 
-def aircraft_of(user: User) -> list[Aircraft]:
-    """Return the aircraft this person is a member of, in their order of serial."""
-    return list(Aircraft.objects.for_user(user).order_by("designation", "serial"))
+def aircraft_of(user: User) -> list[Member]:
+    """Return this person's memberships of today, each with its aircraft, in the order of designation."""
+    rows = user.memberships.filter(ended_on=None).select_related("aircraft")
+    return list(rows.order_by("aircraft__designation", "aircraft__serial"))
+
+
+@dataclass(frozen=True)
+class Line:
+    """A section in its place of the work breakdown; `depth` 0 stands at the left."""
+
+    section: Section
+    depth: int
+
+
+def section_tree(aircraft: Aircraft) -> list[Line]:
+    """Return the sections, each under its parent, in their order; one query."""
+    below: dict[UUID | None, list[Section]] = {}
+    for row in aircraft.sections.all():
+        below.setdefault(row.parent_id, []).append(row)
+    return _lines(below, None, 0)
+
+
+def _lines(below: dict[UUID | None, list[Section]], parent: UUID | None, depth: int) -> list[Line]:
+    found = []
+    for row in below.get(parent, []):
+        found += [Line(row, depth), *_lines(below, row.id, depth + 1)]
+    return found
 
 
 def people_of(aircraft: Aircraft) -> list[Member]:

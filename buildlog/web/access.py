@@ -12,13 +12,14 @@ from functools import wraps
 from typing import Any, Concatenate, Protocol, cast
 from uuid import UUID
 
-from django.contrib.auth.views import redirect_to_login
 from django.http import Http404, HttpRequest, HttpResponse, HttpResponseForbidden, HttpResponseNotAllowed
 from django.template.loader import render_to_string
 
 from buildlog.aircraft.models import Aircraft, Member, User
 from buildlog.aircraft.queries import membership, review_membership
 from buildlog.aircraft.roles import Act, Role, may
+from buildlog.web.sign_in_page import ask_who
+from buildlog.web.signed_in_since import keep_age
 
 log = logging.getLogger("buildlog.access")
 
@@ -137,10 +138,11 @@ class AccessGate:
             return forbidden(request)
         if rule.audience == "public":
             return None
+        keep_age(request)
         person = request.user
         by_link = rule.audience == "aircraft" and "review_link" in request.session
         if not person.is_authenticated and not by_link:
-            return redirect_to_login(request.get_full_path())
+            return ask_who(request)
         if rule.audience == "admin" and not getattr(person, "is_site_admin", False):
             return forbidden(request)
         return None

@@ -4,6 +4,7 @@ from collections.abc import Callable
 from typing import Any, TypeVar
 
 from django import forms
+from django.http import HttpRequest
 
 from buildlog.errors import Refused
 
@@ -22,6 +23,11 @@ def run(form: forms.Form, action: Callable[..., T], **more: Any) -> T | None:
     except Refused as refusal:
         form.add_error(refusal.field if refusal.field in form.fields else None, refusal.text)
         return None
+
+
+def run_posted(request: HttpRequest, form: forms.Form, action: Callable[..., T], **more: Any) -> T | None:
+    """Do the same for a posted form; None for a page that is only looked at."""
+    return run(form, action, **more) if request.method == "POST" else None
 
 
 class PlainText(forms.CharField):

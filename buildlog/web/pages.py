@@ -2,15 +2,18 @@
 
 from collections.abc import Mapping
 from dataclasses import dataclass
+from functools import cache
 from typing import Any
 from urllib.parse import urlsplit
+from uuid import UUID
 
-from django.http import HttpRequest, HttpResponse
+from django.http import HttpRequest, HttpResponse, HttpResponseRedirect
 from django.shortcuts import render
-from django.urls import NoReverseMatch, reverse
+from django.urls import NoReverseMatch, resolve, reverse
 
-from buildlog.aircraft.models import Aircraft
+from buildlog.aircraft.models import Aircraft, Member
 from buildlog.aircraft.roles import Act, may
+from buildlog.web.kept import kept_fields
 
 LIGHTS = ("day", "night", "sun")
 
@@ -71,8 +74,23 @@ def _way(request: HttpRequest, aircraft: Aircraft, title: str, name: str, icon: 
         url = reverse(name, args=[aircraft.id])
     except NoReverseMatch:
         return None
+    if not _open_to(request.member, _rule(name)):  # type: ignore[attr-defined]
+        return None
     here = request.path == url or (name not in {"bench", "aircraft-page"} and request.path.startswith(url))
     return Way(title, url, here, icon)
+
+
+@cache
+def _rule(name: str) -> Any:
+    nobody = UUID(int=0)
+    return getattr(resolve(reverse(name, args=[nobody])).func, "rule", None)
+
+
+def _open_to(member: Member, rule: Any) -> bool:
+    """Return whether a page would open for this visitor: a way that ends in "not yours" is not offered."""
+    if rule is None or rule.read is None or not may(member.role, rule.read):
+        return False
+    return member.chapters is None or not rule.chapter or rule.chapter in member.chapters
 
 
 def show(
@@ -83,6 +101,13 @@ def show(
     return render(request, wanted, dict(context), status=status)
 
 
+def see_other(name: str, *args: object) -> HttpResponse:
+    """Answer a saved form: look at this page now."""
+    answer = HttpResponseRedirect(reverse(name, args=args))
+    answer.status_code = 303
+    return answer
+
+
 def stale_form(request: HttpRequest, reason: str = "") -> HttpResponse:
     """Answer a form whose token is gone (an old page, a cleared cookie): what was typed is shown, ready to send again.
 
@@ -91,9 +116,3 @@ def stale_form(request: HttpRequest, reason: str = "") -> HttpResponse:
     origin = request.headers.get("Origin") or request.headers.get("Referer") or ""
     own = urlsplit(origin).netloc == request.get_host()
     return render(request, "stale_form.html", {"kept": kept_fields(request) if own else []}, status=403)
-
-
-def kept_fields(request: HttpRequest) -> list[tuple[str, str]]:
-    """Return what was typed, without tokens and passwords, to be shown again."""
-    secret = {"csrfmiddlewaretoken", "password", "code", "kept_for"}
-    return [(name, value) for name in request.POST for value in request.POST.getlist(name) if name not in secret]

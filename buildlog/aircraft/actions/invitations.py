@@ -126,6 +126,9 @@ def take_invitation_anew(
     at: dt.datetime | None = None,
 ) -> Member:
     """Make an account and take up an invitation with it: both, or neither."""
+    # The code is looked at first: without one, nobody learns here which sign-ins are taken.
+    if open_invitation(invitation_code, now=at or timezone.now()) is None:
+        raise Refused(CODE_GONE, field="invitation_code")
     user = create_user(sign_in=sign_in, name=name, password=password, at=at)
     return take_invitation(user=user, invitation_code=invitation_code, authority=authority, number=number, at=at)
 

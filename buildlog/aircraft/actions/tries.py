@@ -58,9 +58,9 @@ def begin_try(*, account: str, network: str, field: str | None = None, at: dt.da
 
 
 @transaction.atomic
-def forget_tries(*, account: str, network: str) -> None:
-    """Take back the try that turned out right: all of this account here, and the one counted for the network."""
+def forget_tries(*, account: str, network: str, steps: int = 1) -> None:
+    """Take back what turned out right: all tries of this account from here, and the last `steps` of the network."""
     (own, _), (shared, _) = _keys(account, network)
     FailedSignIn.objects.filter(key=own).delete()
-    if last := FailedSignIn.objects.filter(key=shared).order_by("-at", "-id").first():
-        last.delete()
+    last = FailedSignIn.objects.filter(key=shared).order_by("-at", "-id").values_list("id", flat=True)[:steps]
+    FailedSignIn.objects.filter(id__in=list(last)).delete()

@@ -1,0 +1,1 @@
+"""Pages about people, rights, the aircraft and its conversion."""
