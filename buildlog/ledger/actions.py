@@ -44,11 +44,11 @@ def write(
     touched = ([about] if about is not None else []) + list(rows)
     body = {
         "text": text,
-        "rows": [{"model": type(row).__name__, "fields": row.as_recorded()} for row in touched],
+        "rows": [{"model": row._meta.object_name, "fields": row.as_recorded()} for row in touched],
         "facts": canonical.plain(facts or {}),
     }
     if removed:
-        body["removed"] = [{"model": type(row).__name__, "id": str(row.pk)} for row in removed]
+        body["removed"] = [{"model": row._meta.object_name, "id": str(row.pk)} for row in removed]
     return _append(
         chain=aircraft.id if aircraft else SITE_CHAIN,
         kind=kind,
