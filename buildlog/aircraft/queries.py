@@ -34,6 +34,11 @@ def user_of(user_id: str) -> User | None:
     return User.objects.filter(id=user_id, is_active=True).first()
 
 
+def user_named(sign_in: str) -> User | None:
+    """Return the person who signs in with this name."""
+    return User.objects.filter(sign_in=sign_in.strip().casefold()).first()
+
+
 def review_membership(link_id: str | None, aircraft_id: UUID, chapter: str) -> Member | None:
     """Return a reviewer by link as an unsaved member, or None when the link does not open this part of the record."""
     if not link_id:

@@ -19,7 +19,7 @@ from buildlog.aircraft.actions.invitations import (
 )
 from buildlog.aircraft.actions.links import make_review_link, open_review_link, revoke_review_link
 from buildlog.aircraft.actions.members import add_member, change_role, end_membership
-from buildlog.aircraft.actions.people import change_password, create_user, rename_user
+from buildlog.aircraft.actions.people import change_password, create_user, let_in, rename_user
 from buildlog.aircraft.actions.second_step import add_second_step, remove_second_step, spend_code
 from buildlog.aircraft.actions.sessions import end_session
 from buildlog.aircraft.actions.tries import begin_try, forget_tries
@@ -42,6 +42,7 @@ __all__ = [
     "end_session",
     "forget_tries",
     "invite",
+    "let_in",
     "make_review_link",
     "make_setup_code",
     "open_review_link",

@@ -74,6 +74,18 @@ def rename_user(*, user: User, name: str, at: dt.datetime | None = None) -> User
 
 
 @transaction.atomic
+def let_in(*, user: User, new_password: str, at: dt.datetime | None = None) -> User:
+    """Give a person another password from the console and take away the second step; the trail says so."""
+    check_password_rules(new_password, user, field="new_password")
+    user.set_password(new_password)
+    user.totp_secret = ""
+    user.save(update_fields=["password", "totp_secret"])
+    text = f"the console gave {user.name} a new password and took away the second step"
+    ledger.write(aircraft=None, by=None, kind="user.let-in", about=user, text=text, at=at)
+    return user
+
+
+@transaction.atomic
 def change_password(*, user: User, new_password: str, proof: str, at: dt.datetime | None = None) -> User:
     """Change a password; every other sign-in of this person ends with it."""
     check_password_rules(new_password, user, field="new_password")
