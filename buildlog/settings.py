@@ -156,8 +156,7 @@ LANGUAGE_CODE = "en"
 USE_I18N = False
 USE_TZ = True
 TIME_ZONE = os.environ.get("BUILDLOG_TIME_ZONE", "UTC")
-DATE_FORMAT = "j M Y"
-DATETIME_FORMAT = "j M Y H:i"
+FORMAT_MODULE_PATH = "buildlog.formats"
 
 TASKS = {"default": {"BACKEND": "django_tasks_db.DatabaseBackend"}}
 

@@ -1,0 +1,1 @@
+"""How dates are written and read; Django finds them by language, before the settings."""
