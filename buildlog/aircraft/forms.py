@@ -52,6 +52,8 @@ class ProofForm(forms.Form):
 
     def __init__(self, *args: Any, user: User, **more: Any) -> None:
         super().__init__(*args, **more)
+        for field in self.fields.values():  # what stands before a password is taken for a sign-in by browsers
+            field.widget.attrs.setdefault("autocomplete", "off")
         for name in ("password", "one_time_code"):
             self.fields[name] = self.fields.pop(name)
         if not user.totp_secret:

@@ -9,6 +9,7 @@ from django.http import HttpRequest
 from buildlog.errors import Refused
 
 T = TypeVar("T")
+NOT_EMPTY = "This cannot stay empty."
 
 
 def run(form: forms.Form, action: Callable[..., T], **more: Any) -> T | None:
@@ -33,6 +34,8 @@ def run_posted(request: HttpRequest, form: forms.Form, action: Callable[..., T],
 class PlainText(forms.CharField):
     """Text as typed: not stripped of meaning, no U+0000, no half surrogate pairs (the ledger could not spell them)."""
 
+    default_error_messages = {"required": NOT_EMPTY}
+
     def to_python(self, value: Any) -> str:
         """Return the text; raise a sentence for signs that cannot be kept."""
         text: str = super().to_python(value) or ""
@@ -56,5 +59,6 @@ class Day(forms.DateField):
 
     def __init__(self, **more: Any) -> None:
         more.setdefault("error_messages", {})
+        more["error_messages"].setdefault("required", NOT_EMPTY)
         more["error_messages"].setdefault("invalid", "Write the date as year-month-day, like 2026-03-14.")
         super().__init__(widget=forms.DateInput(attrs={"type": "date"}, format="%Y-%m-%d"), **more)

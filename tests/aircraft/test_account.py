@@ -84,7 +84,7 @@ def test_guessed_setup_codes_are_slowed(client):
     [
         ("password", "too short", "12 characters"),
         ("password", "password1234", "tried first"),
-        ("serial", "", "required"),
+        ("serial", "", "cannot stay empty"),
         ("seats", "many", "whole number"),
         ("seats", "0", "1 to 20"),
         ("started_on", "14.3.2026", "year-month-day"),
