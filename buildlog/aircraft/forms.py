@@ -13,6 +13,7 @@ from buildlog.web.forms import Day, PlainText
 
 TWELVE = "12 characters or more. Three or four words that do not belong together are good."
 NO_DETOURS = {"autocapitalize": "none", "spellcheck": "false", "autocomplete": "off"}
+CHOOSE = {"required": "Choose one."}
 NEEDED_PASSWORD = {"required": "Write your password."}
 
 
@@ -60,14 +61,14 @@ class ProofForm(forms.Form):
             del self.fields["one_time_code"]
 
 
-class AircraftForm(forms.Form):
-    """The title block."""
+class FirstAircraftForm(forms.Form):
+    """What the record of an aircraft cannot begin without; the rest of the title block can be said later."""
 
     designation = PlainText(max_length=120, label="Designation", help_text="What the aircraft is called.")
     serial = PlainText(max_length=40, label="Serial", help_text="Yours to give; it stands on every binder page.")
-    registration = PlainText(max_length=20, required=False, label="Registration")
-    basis = forms.ChoiceField(choices=Aircraft.Basis.choices, label="Built from")
-    plan_set = PlainText(max_length=120, required=False, label="Plan set", help_text="Its name, number and revision.")
+    basis = forms.ChoiceField(
+        choices=[("", "Choose"), *Aircraft.Basis.choices], label="Built from", error_messages=CHOOSE
+    )
     seats = forms.IntegerField(
         label="Seats",
         initial=2,
@@ -76,17 +77,27 @@ class AircraftForm(forms.Form):
     )
     jurisdiction = forms.ChoiceField(
         label="Authority",
+        error_messages=CHOOSE,
         help_text="Decides words, papers and who must sign. It is a start, to be checked against current papers.",
     )
     units = forms.ChoiceField(choices=Aircraft.Units.choices, label="Units")
     started_on = Day(label="Work began on", error_messages={"required": "Give the day the work began."})
-    built_at = PlainText(max_length=160, required=False, label="Where it is built")
 
     def __init__(self, *args: Any, **more: Any) -> None:
         super().__init__(*args, **more)
         field = self.fields["jurisdiction"]
         assert isinstance(field, forms.ChoiceField)
-        field.choices = [(one.key, one.title) for one in load.jurisdictions().values()]
+        field.choices = [("", "Choose")] + [(one.key, one.title) for one in load.jurisdictions().values()]
+
+
+class AircraftForm(FirstAircraftForm):
+    """The title block."""
+
+    registration = PlainText(max_length=20, required=False, label="Registration")
+    plan_set = PlainText(max_length=120, required=False, label="Plan set", help_text="Its name, number and revision.")
+    built_at = PlainText(max_length=160, required=False, label="Where it is built")
+
+    field_order = ("designation", "serial", "registration", "basis", "plan_set", "seats")
 
 
 class NewAircraftForm(AircraftForm):
@@ -108,7 +119,7 @@ class PersonForm(forms.Form):
     password = new_password()
 
 
-class SetUpForm(PersonForm, AircraftForm):
+class SetUpForm(PersonForm, FirstAircraftForm):
     """The first account and the first aircraft of a site."""
 
     set_up_code = PlainText(

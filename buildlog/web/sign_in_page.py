@@ -1,6 +1,6 @@
 """The page that asks who is there: on its own, or in place of an answer when a sign-in has run out."""
 
-from urllib.parse import urlencode
+from urllib.parse import urlencode, urlsplit, urlunsplit
 
 from django import forms
 from django.http import HttpRequest, HttpResponse, HttpResponseRedirect
@@ -48,11 +48,25 @@ class CodeForm(forms.Form):
 
 
 def ask_who(request: HttpRequest) -> HttpResponse:
-    """Answer a request of somebody not signed in: a look is sent to the sign-in page, a form is kept in it."""
+    """Answer a request of somebody not signed in: a look is sent to the sign-in page, a form is kept in it.
+
+    A part of a page that htmx asked for cannot hold the sign-in: the whole page is taken there.
+    """
+    by_part = "HX-Request" in request.headers
     if request.method in {"GET", "HEAD"}:
-        return HttpResponseRedirect(f"{reverse('sign-in')}?{urlencode({'next': request.get_full_path()})}")
+        way = f"{reverse('sign-in')}?{urlencode({'next': _page_of(request)})}"
+        return HttpResponse(status=401, headers={"HX-Redirect": way}) if by_part else HttpResponseRedirect(way)
     form = SignInForm(initial={"kept": kept.pack(request)})
-    return render(request, "web/sign_in.html", {"form": form, "ran_out": True}, status=401)
+    answer = render(request, "web/sign_in.html", {"form": form, "ran_out": True}, status=401)
+    if by_part:
+        answer.headers["HX-Retarget"], answer.headers["HX-Reswap"] = "body", "innerHTML"
+    return answer
+
+
+def _page_of(request: HttpRequest) -> str:
+    """Return the page somebody looks at; for a part, the page around it."""
+    around = urlsplit(request.headers.get("HX-Current-URL", ""))
+    return urlunsplit(("", "", around.path, around.query, "")) if around.path else request.get_full_path()
 
 
 def safe_next(request: HttpRequest, wanted: str) -> str:

@@ -89,6 +89,8 @@ def test_guessed_setup_codes_are_slowed(client):
         ("seats", "0", "1 to 20"),
         ("started_on", "14.3.2026", "year-month-day"),
         ("started_on", "2999-01-01", "future"),
+        ("jurisdiction", "", "Choose one."),
+        ("basis", "", "Choose one."),
         ("jurisdiction", "atlantis", "not one of the available choices"),
         ("designation", "a\x00b", "cannot be kept"),
     ],

@@ -46,6 +46,25 @@ RIGHTS_BY_HAND = {
 }
 
 
+# Pages that give rights or decide what is looked at, with the acts they must ask for, by hand.
+ACTS_BY_HAND = {
+    "people": (Act.MANAGE, None),
+    "member-edit": (Act.MANAGE, Act.MANAGE),
+    "member-end": (Act.MANAGE, Act.MANAGE),
+    "invitation-add": (Act.MANAGE, Act.MANAGE),
+    "invitation-revoke": (Act.MANAGE, Act.MANAGE),
+    "review-link-add": (Act.MANAGE, Act.MANAGE),
+    "review-link-revoke": (Act.MANAGE, Act.MANAGE),
+    "aircraft-edit": (Act.MANAGE, Act.MANAGE),
+    "conversion": (Act.READ, Act.PLAN),
+    "sections": (Act.READ, Act.PLAN),
+    "zones": (Act.READ, Act.PLAN),
+    "section-edit": (Act.PLAN, Act.PLAN),
+    "zone-edit": (Act.PLAN, Act.PLAN),
+    "photo-original": (Act.ORIGINAL, None),
+}
+
+
 @dataclass(frozen=True)
 class Site:
     """One aircraft with somebody in every role."""
@@ -126,6 +145,16 @@ def test_rights_are_as_written_by_hand():
     assert {act.value: {role.value for role in roles} for act, roles in RIGHTS.items()} == RIGHTS_BY_HAND
     assert set(RIGHTS) == set(Act)
     assert not any(Role.LINK in roles for act, roles in RIGHTS.items() if act is not Act.READ)
+
+
+def test_pages_of_weight_ask_for_the_acts_written_by_hand():
+    found = {page.name: (page.rule.read, page.rule.write) for page in PAGES if page.name in ACTS_BY_HAND and page.rule}
+    assert found == {name: ACTS_BY_HAND[name] for name in found}
+    assert "people" in found
+
+
+def test_nobody_writes_who_only_may_read():
+    assert [page.name for page in PAGES if page.rule and page.rule.write in {Act.READ, Act.ORIGINAL}] == []
 
 
 @by_name

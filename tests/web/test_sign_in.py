@@ -259,3 +259,15 @@ def test_nul_in_a_field_is_a_sentence(client):
     make.user()
     answer = client.post(reverse("sign-in"), {"sign_in": "a\x00b", "password": "x\x00y"})
     assert answer.status_code == 422
+
+
+def test_part_of_a_page_sends_the_whole_page_to_the_sign_in(client):
+    aircraft = make.aircraft()
+    page = reverse("zones", args=[aircraft.id])
+    asked = {"HX-Request": "true", "HX-Current-URL": f"http://testserver{page}?a=1"}
+    answer = client.get(reverse("sections", args=[aircraft.id]), headers=asked)
+    assert answer.status_code == 401
+    assert answer["HX-Redirect"] == f"{reverse('sign-in')}?next={page.replace('/', '%2F')}%3Fa%3D1"
+    sent = client.post(page, {"code": "LW-1", "title": "Root bay"}, headers=asked)
+    assert (sent.status_code, sent["HX-Retarget"]) == (401, "body")
+    assert "You are signed out" in sent.content.decode()

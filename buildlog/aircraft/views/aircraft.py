@@ -37,8 +37,8 @@ def aircraft_add(request: HttpRequest) -> HttpResponse:
 @aircraft_view(read=Act.MANAGE, write=Act.MANAGE)
 def aircraft_edit(request: AircraftRequest, aircraft: Aircraft) -> HttpResponse:
     """Correct the title block."""
-    names = AircraftForm.base_fields
-    form = AircraftForm(request.POST or None, initial={name: getattr(aircraft, name) for name in names})
+    initial = {name: getattr(aircraft, name) for name in AircraftForm.base_fields}
+    form = AircraftForm(request.POST or None, initial=initial)
     if run_posted(request, form, actions.edit_aircraft, aircraft=aircraft, by=request.user):
         return see_other("sections", aircraft.id)
     if form.errors:
