@@ -189,6 +189,16 @@ def test_link_opens_its_chapters_and_no_other(client, aircraft):
     assert kinds(aircraft)[-1] == "review-link.used"
 
 
+def test_opening_a_link_changes_the_session_key(client, aircraft):
+    client.get(reverse("review-enter"))
+    session = client.session
+    session["planted"] = True
+    session.save()
+    before = session.session_key
+    client.post(reverse("review-enter"), {"token": review_link(aircraft=aircraft).secret})
+    assert client.session.session_key != before
+
+
 def test_whole_link_may_be_pasted_and_only_its_digest_is_kept(client, aircraft):
     offer = review_link(aircraft=aircraft)
     assert len(offer.secret) >= 43  # 256 bits in base 64

@@ -54,6 +54,7 @@ def review_enter(request: HttpRequest) -> HttpResponse:
     if request.method == "POST":
         act = proof.slowed(actions.open_review_link, account="review", network=network_of(request), field="token")
         if link := run(form, act):
+            request.session.cycle_key()  # a session key that somebody planted before opens nothing
             request.session["review_link"] = str(link.id)
             return see_other("review", link.aircraft_id)
     status = 422 if form.errors else 200
