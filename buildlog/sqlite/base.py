@@ -4,14 +4,12 @@ With trusted_schema=OFF, which keeps a doctored database file from running funct
 SQLite calls JSON_VALID in a CHECK unsafe and refuses the table. JSON columns are written by Django's encoder alone.
 """
 
-from typing import ClassVar
-
 from django.db.backends.sqlite3 import base
 
 
 class DatabaseWrapper(base.DatabaseWrapper):
     """SQLite with the checks of JSON columns left out."""
 
-    data_type_check_constraints: ClassVar[dict[str, str]] = {
+    data_type_check_constraints = {
         kind: check for kind, check in base.DatabaseWrapper.data_type_check_constraints.items() if kind != "JSONField"
     }

@@ -47,9 +47,9 @@ class Command(BaseCommand):
             for key, method in methods().items():
                 self.stdout.write(f"{key:26} {method.title}")
             return
-        method = methods().get(options["key"])
-        if method is None:
+        if options["key"] not in methods():
             raise CommandError(f"There is no method {options['key']!r}. Known: {', '.join(methods())}.")
+        method = methods()[options["key"]]
         try:
             result = run(method, _given(method.inputs, options["inputs"]))
         except Refused as refusal:

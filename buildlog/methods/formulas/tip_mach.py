@@ -1,8 +1,6 @@
 """Tip speed of a propeller and its Mach number, with the limits solved back."""
 
 import math
-from collections.abc import Mapping
-
 from buildlog.errors import Refused
 from buildlog.methods.declare import Example, Input, Limit, Method, Output, Plot, Series, Text, Values
 
@@ -37,7 +35,7 @@ def compute(
     return found | (_limits(diameter, speed, airspeed, sound, mach_limit) if mach_limit is not None else {})
 
 
-def _limits(diameter: float, speed: float, airspeed: float, sound: float, limit: float) -> Mapping[str, float]:
+def _limits(diameter: float, speed: float, airspeed: float, sound: float, limit: float) -> dict[str, float | None]:
     left = (limit * sound) ** 2 - airspeed**2
     if left <= 0:
         raise Refused(
