@@ -13,6 +13,7 @@ from typing import Any, Concatenate, Protocol, cast
 from uuid import UUID
 
 from django.http import Http404, HttpRequest, HttpResponse, HttpResponseForbidden, HttpResponseNotAllowed
+from django.http.response import HttpResponseBase
 from django.template.loader import render_to_string
 
 from buildlog.aircraft.models import Aircraft, Member, User
@@ -48,7 +49,7 @@ class AircraftRequest(HttpRequest):
     aircraft: Aircraft
 
 
-View = Callable[..., HttpResponse]
+View = Callable[..., HttpResponseBase]
 
 
 def public(view: View) -> View:
@@ -71,7 +72,7 @@ def site_admin(view: View) -> View:
 
 def aircraft_view(
     *, read: Act | None = Act.READ, write: Act | None = None, chapter: str = ""
-) -> Callable[[Callable[Concatenate[AircraftRequest, Aircraft, ...], HttpResponse]], View]:
+) -> Callable[[Callable[Concatenate[AircraftRequest, Aircraft, ...], HttpResponseBase]], View]:
     """Guard a page of one aircraft.
 
     read: the act asked for on GET and HEAD (None: no GET). write: the act asked for on POST (None: no POST).
@@ -79,9 +80,9 @@ def aircraft_view(
     Not a member: 404. A member without the right: 403. Any other method: 405.
     """
 
-    def guard(view: Callable[Concatenate[AircraftRequest, Aircraft, ...], HttpResponse]) -> View:
+    def guard(view: Callable[Concatenate[AircraftRequest, Aircraft, ...], HttpResponseBase]) -> View:
         @wraps(view)
-        def guarded(request: HttpRequest, aircraft_id: UUID, *args: Any, **kwargs: Any) -> HttpResponse:
+        def guarded(request: HttpRequest, aircraft_id: UUID, *args: Any, **kwargs: Any) -> HttpResponseBase:
             member = _member(request, aircraft_id, chapter)
             act = read if request.method in {"GET", "HEAD"} else write if request.method == "POST" else None
             if act is None:

@@ -1,6 +1,7 @@
 """Tip speed of a propeller and its Mach number, with the limits solved back."""
 
 import math
+
 from buildlog.errors import Refused
 from buildlog.methods.declare import Example, Input, Limit, Method, Output, Plot, Series, Text, Values
 
