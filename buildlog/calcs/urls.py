@@ -1,5 +1,11 @@
 """Pages of this room."""
 
-from django.urls import URLPattern
+from django.urls import path
 
-urlpatterns: list[URLPattern] = []
+from buildlog.calcs import views
+
+urlpatterns = [
+    path("calculations/", views.calculations, name="calculations"),
+    path("calculations/<slug:key>/", views.calculation_run, name="calculation-run"),
+    path("snapshots/<uuid:snapshot_id>/", views.snapshot_page, name="snapshot-page"),
+]

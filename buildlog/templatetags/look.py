@@ -8,6 +8,7 @@ from django.utils.html import format_html, format_html_join
 from django.utils.safestring import SafeString, mark_safe
 
 from buildlog.methods import units
+from buildlog.profiles import load
 
 register = template.Library()
 
@@ -93,6 +94,13 @@ def short(digest: str) -> SafeString:
 def unit(spelled: str) -> str:
     """Return a unit as it is printed."""
     return units.shown(spelled)
+
+
+@register.filter
+def position(key: str) -> str:
+    """Return a position in words: a declared one's title, or the builder's own words."""
+    declared = load.positions().get(key)
+    return declared.title if declared else key
 
 
 @register.filter
