@@ -36,7 +36,9 @@ def part_page(request: HttpRequest, aircraft: Aircraft, part_id: UUID) -> HttpRe
 @aircraft_view(read=Act.PLAN, write=Act.PLAN)
 def part_add(request: AircraftRequest, aircraft: Aircraft) -> HttpResponse:
     """Enter a part, with photos."""
-    form = PartForm(request.POST or None, aircraft=aircraft, initial={"inspection": "waiting"})
+    form = PartForm(
+        request.POST if request.method == "POST" else None, aircraft=aircraft, initial={"inspection": "waiting"}
+    )
     photos = _photos(request, aircraft, form)
     if not form.errors and request.method == "POST":
         part = run(form, actions.add_part, aircraft=aircraft, by=request.user, photos=photos)
@@ -57,7 +59,7 @@ def part_edit(request: AircraftRequest, aircraft: Aircraft, part_id: UUID) -> Ht
     first = {name: getattr(part, name) for name in PartForm.base_fields if hasattr(part, name)}
     first["batches"] = [link.batch_id for link in part.batch_links.all()]
     first["documents"] = [link.document_id for link in part.document_links.all()]
-    form = PartForm(request.POST or None, aircraft=aircraft, initial=first)
+    form = PartForm(request.POST if request.method == "POST" else None, aircraft=aircraft, initial=first)
     photos = _photos(request, aircraft, form)
     if not form.errors and request.method == "POST":
         form.cleaned_data.pop("client_id", None)

@@ -38,5 +38,6 @@ def entry(*, aircraft: Aircraft, by: User | None = None, closed: bool = True, **
 
 ARGUMENTS = {
     "task_id": lambda aircraft: task(aircraft=aircraft).id,
+    "entry-edit:entry_id": lambda aircraft: entry(aircraft=aircraft, closed=False, minutes=1).id,
     "entry_id": lambda aircraft: entry(aircraft=aircraft, minutes=1).id,
 }

@@ -5,7 +5,7 @@ from typing import Any
 from uuid import UUID, uuid4
 
 from django.core.exceptions import ValidationError
-from django.http import HttpRequest, HttpResponse
+from django.http import HttpRequest, HttpResponse, QueryDict
 from django.shortcuts import get_object_or_404, render
 from django.utils import timezone
 
@@ -26,13 +26,18 @@ LATE = timedelta(days=7)
 @aircraft_view(read=Act.LOG, write=Act.LOG)
 def entry_add(request: AircraftRequest, aircraft: Aircraft) -> HttpResponse:
     """Log work: keeps a draft."""
-    form = LogForm(request.POST or None, aircraft=aircraft, by=request.user, initial=_initial(request, aircraft))
+    form = LogForm(_posted(request), aircraft=aircraft, by=request.user, initial=_initial(request, aircraft))
 
     def keep(draft: Any) -> Entry:
         client_id = form.cleaned_data["client_id"]
         return actions.log_entry(aircraft=aircraft, by=request.user, client_id=client_id, draft=draft)
 
     return _answer(request, aircraft, form, keep, {"heading": "Log work"})
+
+
+def _posted(request: HttpRequest) -> QueryDict | None:
+    # An empty post is a post all the same, and has to be told what is missing.
+    return request.POST if request.method == "POST" else None
 
 
 def _initial(request: AircraftRequest, aircraft: Aircraft) -> dict[str, Any]:
@@ -83,7 +88,7 @@ def entry_edit(request: AircraftRequest, aircraft: Aircraft, entry_id: UUID) -> 
     if entry.author_id != request.user.id or entry.closed_at:
         return forbidden(request, "Only its author changes a draft; an entry on the record is amended.")
     first = {**said_by(entry, request.user), "base_version": entry.version}
-    form = LogForm(request.POST or None, aircraft=aircraft, by=request.user, initial=first)
+    form = LogForm(_posted(request), aircraft=aircraft, by=request.user, initial=first)
 
     def keep(draft: Any) -> Entry:
         base = form.cleaned_data["base_version"] or 0
@@ -102,7 +107,7 @@ def entry_amend(request: AircraftRequest, aircraft: Aircraft, entry_id: UUID) ->
     """Correct an entry on the record by another one."""
     entry = _entry(aircraft, entry_id)
     first = {**said_by(entry, request.user), "client_id": uuid4()}
-    form = AmendForm(request.POST or None, aircraft=aircraft, by=request.user, initial=first)
+    form = AmendForm(_posted(request), aircraft=aircraft, by=request.user, initial=first)
 
     def keep(draft: Any) -> Entry:
         said = {name: form.cleaned_data[name] for name in ("client_id", "amend_reason")}
