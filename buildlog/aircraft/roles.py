@@ -35,6 +35,7 @@ class Act(StrEnum):
     SIGN = "sign"  # as performer of one's own work
     INSPECT = "inspect"  # as inspector, never of one's own work
     COMMENT = "comment"  # squawks
+    FETCH = "fetch"  # an issued binder
     MANAGE = "manage"  # people, links, binder, export
 
 
@@ -50,6 +51,7 @@ RIGHTS: dict[Act, frozenset[Role]] = {
     Act.SIGN: _WORKERS,
     Act.INSPECT: frozenset({Role.INSPECTOR}),
     Act.COMMENT: _EVERY - {Role.LINK},
+    Act.FETCH: frozenset({Role.BUILDER, Role.INSPECTOR}),
     Act.MANAGE: frozenset({Role.BUILDER}),
 }
 

@@ -1,5 +1,12 @@
 """Pages of this room."""
 
-from django.urls import URLPattern
+from django.urls import path
 
-urlpatterns: list[URLPattern] = []
+from buildlog.binder import views
+
+urlpatterns = [
+    path("binders/", views.binders, name="binders"),
+    path("binders/print/", views.binder_print, name="binder-print"),
+    path("binders/<uuid:issue_id>/", views.binder_page, name="binder-page"),
+    path("binders/<uuid:issue_id>/file/", views.binder_download, name="binder-download"),
+]

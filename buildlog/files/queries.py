@@ -52,6 +52,12 @@ def file_faults(*, read: bool) -> list[tuple[str, str]]:
     return faults + list(_strays(known))
 
 
+def is_whole(sha256: str) -> bool:
+    """Return whether an original is there and has its digest."""
+    path = path_of(sha256)
+    return path.is_file() and _digest(path) == sha256
+
+
 def _strays(known: set[str]) -> list[tuple[str, str]]:
     old = time.time() - DAY
     found = []

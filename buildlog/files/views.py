@@ -88,6 +88,11 @@ def document_download(request: HttpRequest, aircraft: Aircraft, document_id: UUI
     return _file(document.blob.sha256, document.blob.media_type, f"{document.title[:80]}.pdf")
 
 
+def send_document(document: Document, *, name: str) -> FileResponse:
+    """Give a document under a name, to be saved."""
+    return _file(document.blob.sha256, document.blob.media_type, name)
+
+
 def _file(sha256: str, media_type: str, name: str) -> FileResponse:
     answer = FileResponse(path_of(sha256).open("rb"), as_attachment=True, filename=name, content_type=media_type)
     answer["Content-Security-Policy"] = MEDIA_POLICY

@@ -42,12 +42,15 @@ RIGHTS_BY_HAND = {
     "sign": {"builder", "helper", "assist"},
     "inspect": {"inspector"},
     "comment": {"builder", "helper", "assist", "inspector", "viewer"},
+    "fetch": {"builder", "inspector"},
     "manage": {"builder"},
 }
 
 
 # Pages that give rights or decide what is looked at, with the acts they must ask for, by hand.
 ACTS_BY_HAND = {
+    "binder-print": (Act.MANAGE, Act.MANAGE),
+    "binder-download": (Act.FETCH, None),
     "people": (Act.MANAGE, None),
     "member-edit": (Act.MANAGE, Act.MANAGE),
     "member-end": (Act.MANAGE, Act.MANAGE),

@@ -1,0 +1,1 @@
+"""The chapters of the binder, one file each; found by their CHAPTER."""

@@ -1,0 +1,52 @@
+"""What a binder printed now would lack, worked out from the record."""
+
+import datetime as dt
+from dataclasses import dataclass
+
+from buildlog.aircraft.models import Aircraft
+from buildlog.aircraft.queries import stated
+from buildlog.calcs.queries import SnapshotView, snapshot_views
+from buildlog.methods.result import OUTSIDE, UNDECIDED
+from buildlog.parts.models import Installation, Part
+from buildlog.profiles import load
+from buildlog.shop.models import Entry
+
+
+@dataclass(frozen=True)
+class Gap:
+    """One thing that is missing or open: what it is, which, and the page that cures it."""
+
+    what: str
+    which: tuple[str, ...]
+    cure: str
+
+
+def gaps(aircraft: Aircraft, on: dt.date) -> list[Gap]:
+    """Return every gap of an aircraft on a day, in a fixed number of queries; none of them can be left out."""
+    parts = list(aircraft.parts.all())
+    installed = list(Installation.objects.in_place().filter(aircraft=aircraft).select_related("part"))
+    runs = [view for view in snapshot_views(aircraft) if not view.is_superseded]
+    drafts = Entry.objects.filter(aircraft=aircraft).drafts().count()
+    waiting = [row for row in installed if row.part.inspection == Part.Inspection.WAITING]
+    late = [str(row) for row in aircraft.batches.filter(expires_on__lt=on)]
+    found = [
+        Gap("Checks of the conversion without evidence", _checks(aircraft), "conversion"),
+        Gap("Calculations that came out of limits", _said(runs, {OUTSIDE, UNDECIDED}), "calculations"),
+        Gap("Calculations that are stale", tuple(str(v.snapshot) for v in runs if v.path), "calculations"),
+        Gap("Parts of unknown origin", tuple(str(row) for row in parts if row.origin == Part.Origin.UNKNOWN), "parts"),
+        Gap("Parts installed without receiving inspection", tuple(str(row.part) for row in waiting), "parts"),
+        Gap("Batches past their expiry", tuple(late), "batches"),
+        Gap("Drafts not on the record", (f"{drafts} entries",) if drafts else (), "entries"),
+        Gap("No weighing is on the record", () if aircraft.weighings.exists() else ("empty mass not known",), "parts"),
+    ]
+    return [gap for gap in found if gap.which]
+
+
+def _said(runs: list[SnapshotView], verdicts: set[str]) -> tuple[str, ...]:
+    return tuple(str(view.snapshot) for view in runs if view.result.verdict in verdicts)
+
+
+def _checks(aircraft: Aircraft) -> tuple[str, ...]:
+    """Return the checks that apply, or may apply, to this conversion: in doubt a check applies."""
+    known = stated(aircraft)
+    return tuple(check.title for check in load.checklist().values() if load.applies(check, known).answer != "no")
