@@ -23,8 +23,7 @@ def start(root: Path, arguments: list[str]) -> int:
         os.environ["BUILDLOG_PRINTING"] = "0"
     _must(root, "migrate", "--verbosity=0", words="Bringing the database up to date")
     _must(root, "check_start", words="Checking the database and its folder")
-    if asked.empty:
-        _must(root, "setup_code", words="A new and empty record")
+    _must(root, "setup_code", words="Looking for the first account")
     if asked.prepare:
         print("Everything is prepared.", flush=True)
         return 0
@@ -35,7 +34,6 @@ def _start_arguments(arguments: list[str]) -> argparse.Namespace:
     parser = argparse.ArgumentParser(prog="manage.py start", description="Set up and serve Buildlog.")
     parser.add_argument("--port", type=int, default=8000)
     parser.add_argument("--prepare", action="store_true", help="all but serving")
-    parser.add_argument("--empty", action="store_true", help="print a one-time code for the first account")
     return parser.parse_args(arguments)
 
 
