@@ -104,22 +104,3 @@ def bar_chart(
         body.append(path([(LEFT, frame.y(at)), (WIDTH - RIGHT, frame.y(at))], cls="f0 k-red", width=3))
         body.append(text(WIDTH - RIGHT - 4, frame.y(at) - 6, words, anchor="end", cls="halo tb"))
     return drawing(WIDTH, HEIGHT, title, body)
-
-
-def band(
-    values: Sequence[tuple[str, float]], *, lower: float | None, upper: float | None, unit: str, title: str
-) -> str:
-    """Return readings as dots over their days, with limit lines."""
-    bounds = [at for at in (lower, upper) if at is not None]
-    frame = Frame([0, max(len(values) - 1, 1)], [value for _, value in values] + bounds)
-    body = frame.axes("", unit, bars=True)
-    for name, at in (("lower limit", lower), ("upper limit", upper)):
-        if at is not None:
-            body.append(path([(LEFT, frame.y(at)), (WIDTH - RIGHT, frame.y(at))], cls="f0 k-red", width=3))
-            body.append(text(LEFT + 6, frame.y(at) - 6, f"{name} {label(at)}", cls="halo tb"))
-    for place, (day, value) in enumerate(values):
-        x = frame.x(place) if len(values) > 1 else (LEFT + WIDTH - RIGHT) / 2
-        body.append(tag("circle", cls="fi k-ink", cx=x, cy=frame.y(value), r=5.0))
-        if len(values) <= 8:
-            body.append(text(x, HEIGHT - BOTTOM + 20, day, anchor="middle", cls="t2"))
-    return drawing(WIDTH, HEIGHT, title, body)

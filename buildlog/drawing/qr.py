@@ -1,7 +1,5 @@
 """Codes to be scanned: QR as SVG, with its quiet zone."""
 
-from io import BytesIO
-
 from buildlog.drawing.svg import drawing, tag
 
 QUIET = 4  # modules; ISO/IEC 18004 asks for four
@@ -18,12 +16,3 @@ def qr_svg(content: str, *, title: str) -> str:
     )
     ground = tag("path", d=f"M0 0h{size}v{size}H0z", fill="#ffffff")
     return drawing(size, size, title, [ground, tag("path", d=dark, fill="#000000")], cls="code")
-
-
-def qr_png(content: str, *, scale: int = 4) -> bytes:
-    """Return the same code as PNG."""
-    import segno
-
-    out = BytesIO()
-    segno.make(content, error="q", micro=False).save(out, kind="png", scale=scale, border=QUIET)
-    return out.getvalue()

@@ -31,7 +31,8 @@ def aircraft(transactional_db):
     work = task(aircraft=row, title="Fit the carburettor")
     picture = photo(aircraft=row, caption="Jet well seen from the left")
     first = entry(aircraft=row, task=work, note="Fitted <b>carburettor</b> & lines", photos=[picture])
-    more = {"client_id": uuid4(), "draft": draft(minutes=30, note="Half an hour only"), "amend_reason": "clock ran on"}
+    corrected = draft(minutes=30, note="Half an hour only", task=work)
+    more = {"client_id": uuid4(), "draft": corrected, "amend_reason": "clock ran on"}
     shop.amend_entry(aircraft=row, by=make.builder_of(row), entry=first, **more)
     part(aircraft=row, name="Carburettor", serial="C-118", origin="unknown")
     snapshot(aircraft=row, label="static run")
@@ -65,6 +66,8 @@ def test_a_printed_binder_holds_what_the_record_says(aircraft, paper):
         "working copy",
         "Fitted <b>carburettor</b> & lines",
         "Half an hour only",
+        "Log digest",
+        "14 Mar 2026 to 14 Mar 2026",
         "clock ran on",
         "Jet well seen",
         digest[:4],
