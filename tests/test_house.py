@@ -5,6 +5,7 @@ import re
 from pathlib import Path
 
 import pytest
+from django.template.loader import get_template
 
 ROOT = Path(__file__).resolve().parents[1]
 FLOORS = (
@@ -143,6 +144,11 @@ def test_pages_and_styles_keep_the_laws():
     for path in [*(ROOT / "static" / "css").glob("*.css"), *(ROOT / "static" / "js").glob("*.js")]:
         faults += [f"{path.name} has over 200 lines"] if path.read_text().count("\n") > 200 else []
     assert faults == []
+
+
+def test_every_page_uses_words_that_there_are():
+    for path in (ROOT / "templates").rglob("*.html"):
+        get_template(str(path.relative_to(ROOT / "templates")))
 
 
 def test_the_top_level_holds_what_it_should():

@@ -115,6 +115,12 @@ def spaced(name: str) -> str:
     return name.replace("_", " ").replace("-", " ").capitalize()
 
 
+@register.filter
+def at(mapping: Any, key: Any) -> Any:
+    """Return what a mapping holds at a key, or nothing."""
+    return mapping.get(key)
+
+
 @register.simple_tag(takes_context=True)
 def querystring_of(context: dict[str, Any], **changes: Any) -> str:
     """Return the present query with some values changed."""
