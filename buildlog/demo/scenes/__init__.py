@@ -1,6 +1,6 @@
 """The demo's shop pictures: each scene builds a small world in space, which is then lit and photographed."""
 
-from buildlog.demo.scenes import cockpit, engine, fuel, metal, shop, wood
+from buildlog.demo.scenes import around_engine, cockpit, engine, fuel, metal, papers, people, shop, wood
 from buildlog.demo.scenes.sets import Build, View
 from buildlog.demo.spec import Colour
 
@@ -54,11 +54,11 @@ SCENES: dict[str, tuple[Build, View]] = {
     "torque-seal": (metal.torque_seal, View((0, -0.01, 0.03), 42, 0.58, 20, half_width=0.9, depth=(-0.5, 0.7))),
     "engine-stand": (engine.engine_stand, on_floor(0.0, 0.72, 16, 2.4, 28)),
     "hub-gauge": (engine.hub_gauge, View((-0.03, 0, 0.2), 12, 0.95, -16, half_width=1.4, depth=(-0.6, 0.9))),
-    "propeller": (engine.propeller, View((0, 0, 0.5), 12, 2.3, 20, half_width=1.6, depth=(-1.0, 1.0))),
-    "ignition": (engine.ignition, View((0, 0.05, 0.24), 14, 1.15, -20, half_width=1.4, depth=(-0.6, 0.9))),
-    "exhaust": (engine.exhaust, View((0.05, 0.05, 0.18), 20, 1.35, 16, half_width=1.4, depth=(-0.7, 0.9))),
-    "cowl": (engine.cowl, on_floor(0.0, 0.42, 20, 2.2, 30)),
-    "micrometer": (engine.micrometer, View((0, 0.0, 0.14), 26, 1.3, -14, half_width=1.4, depth=(-0.7, 0.8))),
+    "propeller": (around_engine.propeller, View((0, 0, 0.5), 12, 2.3, 20, half_width=1.6, depth=(-1.0, 1.0))),
+    "ignition": (around_engine.ignition, View((0, 0.05, 0.24), 14, 1.15, -20, half_width=1.4, depth=(-0.6, 0.9))),
+    "exhaust": (around_engine.exhaust, View((0.05, 0.05, 0.18), 20, 1.35, 16, half_width=1.4, depth=(-0.7, 0.9))),
+    "cowl": (around_engine.cowl, on_floor(0.0, 0.42, 20, 2.2, 30)),
+    "micrometer": (around_engine.micrometer, View((0, 0.0, 0.14), 26, 1.3, -14, half_width=1.4, depth=(-0.7, 0.8))),
     "carburettor": (fuel.carburettor, View((0.02, 0, 0.26), 14, 1.15, -10, half_width=1.4, depth=(-0.6, 0.9))),
     "tank": (fuel.tank, View((0.02, 0, 0.22), 24, 1.75, -20, half_width=1.6, depth=(-0.9, 1.0))),
     "flow-trial": (fuel.flow_trial, View((-0.06, 0, 0.16), 26, 1.25, 8, half_width=1.4, depth=(-0.7, 0.9))),
@@ -68,7 +68,10 @@ SCENES: dict[str, tuple[Build, View]] = {
     "label": (shop.label, View((0.0, 0, 0.12), 18, 1.0, 10, half_width=1.2, depth=(-0.6, 0.9))),
     "bench-tools": (shop.bench_tools, View((0, 0, 0.0), elevation=44, distance=1.35, azimuth=-8)),
     "doping": (shop.doping, on_floor(0.0, 0.5, 34, 2.4, 14)),
-    "builder": (shop.builder, View((0.06, -0.02, 0.36), 20, 2.0, 12, half_width=1.6, depth=(-0.6, 0.9))),
+    "builder": (people.builder, View((0.1, 0.0, 0.3), 24, 1.75, 24, half_width=1.6, depth=(-0.6, 0.9))),
+    "hands": (people.hands, View((0.0, 0.02, 0.06), 40, 1.05, -6, half_width=1.4, depth=(-0.9, 0.9))),
+    "battery-tray": (papers.battery_tray, on_floor(0.0, 0.2, 28, 1.35, -24)),
+    "invoice": (papers.invoice, View((0.0, 0.02, 0.0), elevation=56, distance=1.0, azimuth=9)),
     "stock": (shop.stock, View((0, 0, 0.06), 32, 1.75, -16, half_width=1.6, depth=(-0.9, 1.0))),
     "coupon": (wood.coupon, View((0, -0.08, 0.0), elevation=50, distance=0.85, azimuth=8)),
 }

@@ -139,14 +139,13 @@ def flow_trial(stage: Stage, spec: PhotoSpec) -> None:
 
 def firewall(stage: Stage, spec: PhotoSpec) -> None:
     """The steel firewall with mount lugs, gascolator, grommets and lines through it."""
-    for i, (x, z) in enumerate(((-0.42, 0.75), (0.42, 0.75), (-0.42, 0.2), (0.42, 0.2))):
+    for x, z in ((-0.42, 0.75), (0.42, 0.75), (-0.42, 0.2), (0.42, 0.2)):
         lathe(
             stage, (x, 0, z), (0, -1, 0), [(0, 0.07), (0.01, 0.07), (0.01, 0.035), (0.05, 0.03), (0.05, 0)], CAST, n=28
         )
-        bolt(stage, (x, -0.05, z), (0, -1, 0), 0.011, STEEL)
-        tube(stage, [(x, -0.05, z), (x * 0.62, -0.5, 0.48 + (z - 0.48) * 0.5)], 0.015, Skin(spec.colour, 0.45), n=14)
-        if i % 2 == 0:
-            tube(stage, [(x, -0.05, z), (-x * 0.62, -0.5, 0.48 + (z - 0.48) * 0.5)], 0.011, Skin(spec.colour, 0.45))
+        cup = Skin(spec.colour, 0.45)
+        lathe(stage, (x, -0.05, z), (0, -1, 0), [(0, 0.036), (0.05, 0.03), (0.05, 0.02), (0.055, 0)], cup, n=26)
+        bolt(stage, (x, -0.1, z), (0, -1, 0), 0.011, STEEL)
     lathe(
         stage,
         (-0.16, -0.06, 0.36),

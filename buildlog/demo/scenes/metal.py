@@ -48,12 +48,16 @@ def fuselage_frame(stage: Stage, spec: PhotoSpec) -> None:
             a, b = corner(i, side, i % 2), corner(i + 1, side, 1 - i % 2)
             cylinder(stage, a, along(a, b, 0.5), 0.01, skin, n=8)
             cylinder(stage, along(a, b, 0.5), b, 0.01, skin, n=8)
+    _stands(stage)
+    strew(stage, spec, 2.4, 0.5)
+
+
+def _stands(stage: Stage) -> None:
     for x in (-1.1, 1.3):
         box(stage, (x, 0, 0.48), (0.08, 0.9, 0.07), Skin((126, 96, 68)))
         for y in (-0.4, 0.4):
             bar(stage, (x - 0.2, y, 0), (x, y, 0.46), 0.05, 0.04, Skin((112, 86, 60)))
             bar(stage, (x + 0.2, y, 0), (x, y, 0.46), 0.05, 0.04, Skin((112, 86, 60)))
-    strew(stage, spec, 2.4, 0.5)
 
 
 def weld(stage: Stage, spec: PhotoSpec) -> None:

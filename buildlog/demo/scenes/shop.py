@@ -7,7 +7,7 @@ from buildlog.demo.scenes.engine import BLACK
 from buildlog.demo.scenes.geometry import Vec
 from buildlog.demo.scenes.metal import ALLOY, STEEL
 from buildlog.demo.scenes.sets import card, strew
-from buildlog.demo.scenes.solids import ball, bar, box, cable, curve, cylinder, lathe, sheet, tube
+from buildlog.demo.scenes.solids import ball, bar, box, cylinder, lathe, sheet, tube
 from buildlog.demo.scenes.stage import Skin, Stage
 from buildlog.demo.scenes.wood import PLY, SPRUCE, strips, thickness, timber
 from buildlog.demo.spec import PhotoSpec
@@ -75,7 +75,7 @@ def doping(stage: Stage, spec: PhotoSpec) -> None:
     def skin(u: float, v: float) -> Vec:
         return (v - 0.5) * 2.0, 0.62 - u * 1.1, 0.5 + 0.9 * thickness(min(0.95, 0.06 + 0.9 * (1 - u)), 0.15)
 
-    strips(stage, skin, cloth, 14)
+    strips(stage, skin, cloth, 14, nudge=-0.35)
     for i in range(7):
         v = 0.08 + i * 0.14
         tone = Skin(textures.tone(spec.colour if v < 0.52 else CLOTH, 0.9))
@@ -96,71 +96,9 @@ def doping(stage: Stage, spec: PhotoSpec) -> None:
     )
     box(stage, (p[0] + 0.07, p[1] - 0.095, p[2] + 0.016), (0.08, 0.05, 0.02), Skin((60, 48, 40)), turn=-0.25)
     for x in (-0.7, 0.7):
-        box(stage, (x, 0.1, 0.42), (0.09, 0.9, 0.07), Skin((126, 96, 68)))
+        box(stage, (x, 0.1, 0.36), (0.09, 0.9, 0.07), Skin((126, 96, 68)), nudge=-2.0)
         for y in (-0.2, 0.4):
-            bar(stage, (x, y, 0), (x, y, 0.4), 0.05, 0.05, Skin((112, 86, 60)))
-
-
-def builder(stage: Stage, spec: PhotoSpec) -> None:
-    """A person seen from behind at the bench, both hands on the work."""
-    shirt, hair = Skin(spec.colour, 0.05), Skin((52, 42, 36), 0.15)
-    timber(stage, (0.0, 0.28, 0.06), (1.9, 0.08, 0.1), SPRUCE)
-    box(stage, (0.34, 0.24, 0.14), (0.2, 0.07, 0.05), Skin((120, 78, 50), 0.4), turn=0.1)
-    torso = [
-        (-0.5, 0.17),
-        (-0.3, 0.165),
-        (-0.05, 0.185),
-        (0.1, 0.2),
-        (0.2, 0.195),
-        (0.28, 0.15),
-        (0.33, 0.08),
-        (0.36, 0.06),
-    ]
-    lathe(stage, (0, -0.32, 0.3), (0, 0.2, 1), torso, shirt, n=44)
-    for side in (-1.0, 1.0):
-        ball(stage, (side * 0.19, -0.275, 0.5), 0.09, shirt, n=26)
-        shoulder, elbow = (side * 0.2, -0.27, 0.49), (side * 0.32, -0.12, 0.24)
-        hand: Vec = (side * 0.17 + 0.12, 0.2, 0.155)
-        _limb(stage, shoulder, elbow, 0.078, 0.058, shirt)
-        mid: Vec = (
-            elbow[0] * 0.55 + hand[0] * 0.45,
-            elbow[1] * 0.55 + hand[1] * 0.45,
-            elbow[2] * 0.55 + hand[2] * 0.45,
-        )
-        _limb(stage, elbow, mid, 0.058, 0.052, shirt)
-        _limb(stage, mid, hand, 0.042, 0.03, Skin(FLESH, 0.15))
-        ball(stage, hand, 0.042, Skin(FLESH, 0.15), n=20, stretch=0.75)
-        for k in range(4):
-            x = hand[0] + (k - 1.5) * 0.019
-            tube(
-                stage,
-                curve(
-                    [
-                        (x, hand[1], hand[2] + 0.015),
-                        (x, hand[1] + 0.045, hand[2] + 0.02),
-                        (x, hand[1] + 0.07, hand[2] - 0.02),
-                    ],
-                    4,
-                ),
-                0.0095,
-                Skin(FLESH, 0.15),
-                n=10,
-            )
-    cylinder(stage, (0, -0.26, 0.62), (0, -0.23, 0.72), 0.056, Skin(FLESH, 0.1), n=26)
-    ball(stage, (0, -0.19, 0.8), 0.108, hair, n=36, stretch=1.14)
-    for side in (-1.0, 1.0):
-        ball(stage, (side * 0.108, -0.185, 0.785), 0.026, Skin(FLESH, 0.1), n=14, stretch=1.3)
-    straps = [(0.09, 0.13), (-0.09, -0.13)]
-    for top, low in straps:
-        cable(stage, [(top, -0.38, 0.6), (0.0, -0.525, 0.36), (low * -1, -0.505, 0.1)], 0.012, Skin((74, 62, 52), 0.1))
-    strew(stage, spec, 1.1, 0.45)
-
-
-def _limb(stage: Stage, a: Vec, b: Vec, ra: float, rb: float, skin: Skin) -> None:
-    d = (b[0] - a[0], b[1] - a[1], b[2] - a[2])
-    reach = (d[0] ** 2 + d[1] ** 2 + d[2] ** 2) ** 0.5
-    lathe(stage, a, d, [(0, ra), (reach * 0.5, (ra + rb) * 0.52), (reach, rb)], skin, n=26)
-    ball(stage, b, rb, skin, n=18)
+            bar(stage, (x, y, 0), (x, y, 0.34), 0.05, 0.05, Skin((112, 86, 60)))
 
 
 def stock(stage: Stage, spec: PhotoSpec) -> None:

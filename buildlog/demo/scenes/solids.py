@@ -1,5 +1,6 @@
 """Solid bodies made of faces: boxes, turned bodies, tubes, balls and bent sheets."""
 
+import itertools
 from collections.abc import Callable, Sequence
 from math import cos, pi, sin
 
@@ -71,7 +72,7 @@ def cylinder(stage: Stage, a: Vec, b: Vec, radius: float, skin: Skin, *, n: int 
 
 def tube(stage: Stage, points: Sequence[Vec], radius: float, skin: Skin, *, n: int = 14) -> None:
     """Add a hose, wire or bent pipe along points; smooth it first with `curve` where it bends."""
-    for a, b in zip(points, points[1:], strict=False):
+    for a, b in itertools.pairwise(points):
         cylinder(stage, a, b, radius, skin, n=n, caps=False)
 
 

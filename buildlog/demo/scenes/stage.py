@@ -119,10 +119,10 @@ class Stage:
     def ground(self, canvas: Image.Image, texture: Image.Image, corners: list[Vec]) -> None:
         """Lay a texture over a large flat rectangle given by three corners' worth of points near the target."""
         flat = [self.project(p) for p in corners]
-        w, h = texture.size
-        back = homography([(p[0], p[1]) for p in flat], [(0, 0), (w, 0), (w, h), (0, h)])
+        back = homography([(p[0], p[1]) for p in flat], _inside(texture.size))
         laid = texture.transform(canvas.size, Image.Transform.PERSPECTIVE, back, Image.Resampling.BILINEAR)
-        mask = Image.new("L", (w, h), 255).transform(canvas.size, Image.Transform.PERSPECTIVE, back)
+        mask = Image.new("L", canvas.size, 0)
+        ImageDraw.Draw(mask).polygon([(p[0], p[1]) for p in flat], fill=255)
         canvas.paste(laid, (0, 0), mask)
 
     def shade_ground(self, canvas: Image.Image, strength: float = 0.62) -> Image.Image:
@@ -147,6 +147,11 @@ class Stage:
                 pen.polygon(points, fill=surface, outline=surface)
 
 
+def _inside(size: tuple[int, int]) -> list[Point]:
+    w, h = size  # a pixel in from the edge: what lies outside a picture would be laid as black
+    return [(1, 1), (w - 1, 1), (w - 1, h - 1), (1, h - 1)]
+
+
 def _dimmed(value: int, level: float) -> int:
     return int(value * level)
 
@@ -158,10 +163,12 @@ def _paste_quad(canvas: Image.Image, quad: list[Point], picture: Image.Image) ->
     if right <= left or bottom <= top:
         return
     local = [(x - left, y - top) for x, y in quad]
-    w, h = picture.size
-    back = homography(local, [(0, 0), (w, 0), (w, h), (0, h)])
+    back = homography(local, _inside(picture.size))
     size = (right - left, bottom - top)
-    laid = picture.convert("RGB").transform(size, Image.Transform.PERSPECTIVE, back, Image.Resampling.BICUBIC)
-    mask = picture.getchannel("A") if picture.mode == "RGBA" else Image.new("L", (w, h), 255)
-    mask = mask.transform(size, Image.Transform.PERSPECTIVE, back, Image.Resampling.BILINEAR)
+    laid = picture.convert("RGB").transform(size, Image.Transform.PERSPECTIVE, back, Image.Resampling.BILINEAR)
+    if picture.mode == "RGBA":
+        mask = picture.getchannel("A").transform(size, Image.Transform.PERSPECTIVE, back, Image.Resampling.BILINEAR)
+    else:
+        mask = Image.new("L", size, 0)
+        ImageDraw.Draw(mask).polygon(local, fill=255)
     canvas.paste(laid, (left, top), mask)

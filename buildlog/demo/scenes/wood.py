@@ -1,5 +1,6 @@
 """Scenes of woodwork: ribs, spars, skins and the open wing."""
 
+import itertools
 from collections.abc import Callable
 from math import cos, pi, sin, sqrt
 
@@ -27,7 +28,9 @@ def camber(u: float) -> float:
     return 0.04 / 0.16 * (0.8 * u - u * u) if u < 0.4 else 0.04 / 0.36 * (0.2 + 0.8 * u - u * u)
 
 
-def strips(stage: Stage, at: Callable[[float, float], Vec], texture: Image.Image, count: int) -> None:
+def strips(
+    stage: Stage, at: Callable[[float, float], Vec], texture: Image.Image, count: int, *, nudge: float = 0.004
+) -> None:
     """Lay a texture over a bent sheet as `count` strips, each shaded for its own slope; v runs from 1 down to 0."""
     w, h = texture.size
     for i in range(count):
@@ -36,7 +39,7 @@ def strips(stage: Stage, at: Callable[[float, float], Vec], texture: Image.Image
         corners = [at(u0, 0), at(u0, 1), at(u1, 1), at(u1, 0)]
         if stage.casting:
             stage.cast(corners)
-        stage.decal(corners, piece)
+        stage.decal(corners, piece, nudge=nudge)
 
 
 def timber(stage: Stage, centre: Vec, size: Vec, colour: Colour) -> None:
@@ -75,7 +78,7 @@ def rib_jig(stage: Stage, spec: PhotoSpec) -> None:
     knots = [(i / 18) ** 1.5 for i in range(19)]
     stick = Skin(SPRUCE, 0.12)
     for side in (1.0, -1.0):
-        for a, b in zip(knots, knots[1:], strict=False):
+        for a, b in itertools.pairwise(knots):
             bar(stage, at(a, side), at(b, side), 0.009, 0.012, stick)
     posts = [0.06, 0.16, 0.28, 0.4, 0.52, 0.64, 0.76, 0.87]
     for i, u in enumerate(posts):
@@ -164,7 +167,7 @@ def ply_skin(stage: Stage, spec: PhotoSpec) -> None:
         bar(stage, (x, 0.15, 0.14), (x, 0.9, 0.2), 0.012, 0.012, Skin(SPRUCE), parts=3)
         bar(stage, (x, 0.5, 0.3), (x, 0.5, 0.16), 0.012, 0.012, Skin(SPRUCE))
         strap = [skin(u / 10, (x + span / 2) / span) for u in range(1, 10)]
-        for a3, b3 in zip(strap, strap[1:], strict=False):
+        for a3, b3 in itertools.pairwise(strap):
             face_strap(stage, a3, b3, Skin(spec.colour, 0.1))
     box(stage, (0, 0.52, 0.22), (1.6, 0.03, 0.16), Skin(SPRUCE))
     for x in (-0.55, 0.55):
@@ -193,7 +196,7 @@ def wing_frame(stage: Stage, spec: PhotoSpec) -> None:
     for i in range(13):
         x = -1.9 + i * 0.32
         for side in (1.0, -1.0):
-            for a, b in zip(knots, knots[1:], strict=False):
+            for a, b in itertools.pairwise(knots):
                 bar(stage, at(x, a, side), at(x, b, side), 0.012, 0.012, Skin(SPRUCE, 0.1))
         for u in (0.12, 0.3, 0.45, 0.66, 0.82):
             bar(stage, at(x, u, 1), at(x, u, -1), 0.01, 0.01, Skin(SPRUCE, 0.1))
@@ -204,12 +207,16 @@ def wing_frame(stage: Stage, spec: PhotoSpec) -> None:
     for i in range(0, 12, 3):
         a, b = at(-1.9 + i * 0.32, 0.2, 0), at(-1.9 + (i + 3) * 0.32, 0.66, 0)
         cylinder(stage, a, b, 0.0035, STEEL, n=6)
+    _trestles(stage)
+    strew(stage, spec, 2.2, 0.4)
+
+
+def _trestles(stage: Stage) -> None:
     for x in (-1.35, 1.35):
         box(stage, (x, 0.05, 0.5), (0.09, 1.0, 0.07), Skin((128, 98, 68)))
         for y in (-0.38, 0.48):
             bar(stage, (x - 0.18, y, 0), (x, y, 0.47), 0.05, 0.04, Skin((118, 90, 62)))
             bar(stage, (x + 0.18, y, 0), (x, y, 0.47), 0.05, 0.04, Skin((118, 90, 62)))
-    strew(stage, spec, 2.2, 0.4)
 
 
 def coupon(stage: Stage, spec: PhotoSpec) -> None:
