@@ -16,7 +16,6 @@ AIRCRAFT_ROOMS = (
     "conformity",
     "binder",
     "find",
-    "desk",
 )
 
 urlpatterns = [

@@ -1,1 +1,0 @@
-"""Finding things in the record of one aircraft, and reading its history."""

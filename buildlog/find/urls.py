@@ -1,11 +1,5 @@
-"""Pages of the find room, below the aircraft."""
+"""Pages of this room."""
 
-from django.urls import path
+from django.urls import URLPattern
 
-from buildlog.find import views
-
-urlpatterns = [
-    path("find/", views.find, name="find"),
-    path("trail/<uuid:subject_id>/", views.trail, name="trail"),
-    path("changes/", views.recent_changes, name="recent-changes"),
-]
+urlpatterns: list[URLPattern] = []
