@@ -16,6 +16,7 @@ AIRCRAFT_ROOMS = (
     "conformity",
     "binder",
     "find",
+    "desk",
 )
 
 urlpatterns = [

@@ -14,7 +14,7 @@ FLOORS = (
     ("files", "parts", "readings", "calcs"),
     ("shop", "trials", "weighing"),
     ("conformity",),
-    ("binder", "find"),
+    ("binder", "find", "desk"),
 )
 PURE = {"registry", "errors", "methods", "profiles", "drawing", "setup"}
 ABOVE_ALL = {"settings", "urls", "wsgi", "models", "migrations", "management", "templatetags"}

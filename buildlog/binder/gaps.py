@@ -6,6 +6,7 @@ from dataclasses import dataclass
 from buildlog.aircraft.models import Aircraft
 from buildlog.aircraft.queries import stated
 from buildlog.calcs.queries import SnapshotView, snapshot_views
+from buildlog.conformity.models import Squawk
 from buildlog.methods.result import OUTSIDE, UNDECIDED
 from buildlog.parts.models import Installation, Part
 from buildlog.profiles import load
@@ -26,7 +27,7 @@ def gaps(aircraft: Aircraft, on: dt.date) -> list[Gap]:
     parts = list(aircraft.parts.all())
     installed = list(Installation.objects.in_place().filter(aircraft=aircraft).select_related("part"))
     runs = [view for view in snapshot_views(aircraft) if not view.is_superseded]
-    drafts = Entry.objects.filter(aircraft=aircraft).drafts().count()
+    drafts = Entry.objects.filter(aircraft=aircraft).drafts().select_related("author").order_by("worked_on")
     waiting = [row for row in installed if row.part.inspection == Part.Inspection.WAITING]
     late = [str(row) for row in aircraft.batches.filter(expires_on__lt=on)]
     found = [
@@ -36,8 +37,10 @@ def gaps(aircraft: Aircraft, on: dt.date) -> list[Gap]:
         Gap("Parts of unknown origin", tuple(str(row) for row in parts if row.origin == Part.Origin.UNKNOWN), "parts"),
         Gap("Parts installed without receiving inspection", tuple(str(row.part) for row in waiting), "parts"),
         Gap("Batches past their expiry", tuple(late), "batches"),
-        Gap("Drafts not on the record", (f"{drafts} entries",) if drafts else (), "entries"),
-        Gap("No weighing is on the record", () if aircraft.weighings.exists() else ("empty mass not known",), "parts"),
+        Gap("Drafts not on the record", tuple(map(_draft, drafts)), "entries"),
+        Gap("Squawks that are open", _squawks(aircraft), "squawks"),
+        Gap("Deviations without a decision", _deviations(aircraft), "deviations"),
+        Gap("No weighing is on the record", _unweighed(aircraft), "weight-and-balance"),
     ]
     return [gap for gap in found if gap.which]
 
@@ -50,3 +53,22 @@ def _checks(aircraft: Aircraft) -> tuple[str, ...]:
     """Return the checks that apply, or may apply, to this conversion: in doubt a check applies."""
     known = stated(aircraft)
     return tuple(check.title for check in load.checklist().values() if load.applies(check, known).answer != "no")
+
+
+def _draft(row: Entry) -> str:
+    return f"{row.worked_on:%Y-%m-%d} by {row.author.name}"
+
+
+def _squawks(aircraft: Aircraft) -> tuple[str, ...]:
+    """Return the open squawks, those that stop the next step first."""
+    order = Squawk.Due.values
+    rows = sorted(aircraft.squawks.filter(clearing=None), key=lambda row: (order.index(row.due), row.number))
+    return tuple(f"{row.number} {row.title}, {row.get_due_display().lower()}" for row in rows)
+
+
+def _deviations(aircraft: Aircraft) -> tuple[str, ...]:
+    return tuple(f"{row.number} {row.title}" for row in aircraft.deviations.filter(decision=None).order_by("number"))
+
+
+def _unweighed(aircraft: Aircraft) -> tuple[str, ...]:
+    return () if aircraft.weighings.exists() else ("empty mass not known",)

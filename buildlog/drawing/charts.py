@@ -1,46 +1,80 @@
 """Charts: lines, bars and envelopes. Lines are told apart by dash and weight; limits are heavy."""
 
 from collections.abc import Mapping, Sequence
+from dataclasses import dataclass
 from typing import Any
 
 from buildlog.drawing.svg import drawing, path, tag, text
 from buildlog.drawing.ticks import label, ticks
 
-WIDTH, HEIGHT = 640.0, 340.0
-LEFT, RIGHT, TOP, BOTTOM = 70.0, 24.0, 26.0, 52.0
 DASHES = ("", "8 4", "2 4", "12 4 2 4")
+
+
+@dataclass(frozen=True)
+class Sheet:
+    """How large a drawing is, and the room around its axes; text is 12 units high on each."""
+
+    width: float
+    height: float
+    left: float
+    right: float
+    top: float
+    bottom: float
+    cls: str = "plot"
+
+    @property
+    def end(self) -> float:
+        """Return where the axes end on the right."""
+        return self.width - self.right
+
+    @property
+    def foot(self) -> float:
+        """Return where the axes stand at the bottom."""
+        return self.height - self.bottom
+
+
+WIDE = Sheet(640.0, 340.0, 70.0, 24.0, 26.0, 52.0)
+SNUG = Sheet(320.0, 190.0, 30.0, 4.0, 24.0, 26.0, "plot snug")  # beside text, in a column of a page
 
 
 class Frame:
     """The axes of a chart, and where a value stands on the sheet."""
 
-    def __init__(self, xs: Sequence[float], ys: Sequence[float]) -> None:
+    def __init__(self, xs: Sequence[float], ys: Sequence[float], sheet: Sheet = WIDE) -> None:
+        self.sheet = sheet
         self.x_ticks, self.y_ticks = ticks(min(xs), max(xs)), ticks(min(ys), max(ys))
 
     def x(self, value: float) -> float:
         low, high = self.x_ticks[0], self.x_ticks[-1]
-        return LEFT + (value - low) / (high - low) * (WIDTH - LEFT - RIGHT)
+        return self.sheet.left + (value - low) / (high - low) * (self.sheet.end - self.sheet.left)
 
     def y(self, value: float) -> float:
         low, high = self.y_ticks[0], self.y_ticks[-1]
-        return HEIGHT - BOTTOM - (value - low) / (high - low) * (HEIGHT - TOP - BOTTOM)
+        return self.sheet.foot - (value - low) / (high - low) * (self.sheet.foot - self.sheet.top)
 
     def axes(self, x_label: str, y_label: str, *, bars: bool = False) -> list[str]:
         """Return rules, ticks and the words of both axes."""
-        out = []
+        at, out = self.sheet, []
         for value in self.y_ticks:
-            out.append(path([(LEFT, self.y(value)), (WIDTH - RIGHT, self.y(value))], cls="f0 k-rule", width=1))
-            out.append(text(LEFT - 8, self.y(value) + 4, label(value), anchor="end", cls="t2"))
-        if not bars:
-            for value in self.x_ticks:
-                out.append(
-                    path([(self.x(value), HEIGHT - BOTTOM), (self.x(value), HEIGHT - BOTTOM + 5)], cls="f0 k-edge")
-                )
-                out.append(text(self.x(value), HEIGHT - BOTTOM + 20, label(value), anchor="middle", cls="t2"))
-        out.append(path([(LEFT, TOP), (LEFT, HEIGHT - BOTTOM), (WIDTH - RIGHT, HEIGHT - BOTTOM)], cls="f0 k-ink"))
-        out.append(text(LEFT, TOP - 10, y_label, cls="t2"))
-        out.append(text(WIDTH - RIGHT, HEIGHT - 10, x_label, anchor="end", cls="t2"))
+            out.append(self.level(value, cls="f0 k-rule", width=1))
+            out.append(text(at.left - 8, self.y(value) + 4, label(value), anchor="end", cls="t2"))
+        for value in [] if bars else self.x_ticks:
+            out.append(path([(self.x(value), at.foot), (self.x(value), at.foot + 5)], cls="f0 k-edge"))
+            out.append(text(self.x(value), at.foot + 20, label(value), anchor="middle", cls="t2"))
+        out.append(path([(at.left, at.top), (at.left, at.foot), (at.end, at.foot)], cls="f0 k-ink"))
+        out.append(text(at.left, at.top - 10, y_label, cls="t2"))
+        out.append(text(at.end, at.height - 10, x_label, anchor="end", cls="t2"))
         return out
+
+    def level(self, value: float, *, cls: str, width: float) -> str:
+        """Return a line across the axes at a value."""
+        return path([(self.sheet.left, self.y(value)), (self.sheet.end, self.y(value))], cls=cls, width=width)
+
+    def limit(self, words: str, value: float, *, at_end: bool = False) -> list[str]:
+        """Return a limit: a heavy line with its words."""
+        x = self.sheet.end - 4 if at_end else self.sheet.left + 6
+        words_at = text(x, self.y(value) - 6, words, anchor="end" if at_end else "start", cls="halo tb")
+        return [self.level(value, cls="f0 k-red", width=3), words_at]
 
 
 def plot(told: Mapping[str, Any]) -> str:
@@ -69,15 +103,13 @@ def _lines(told: Mapping[str, Any]) -> str:
         if not corners:
             body.append(text(spots[-1][0] - 4, spots[-1][1] - 6, words, anchor="end", cls="halo"))
     for words, at in limits:
-        body.append(path([(LEFT, frame.y(at)), (WIDTH - RIGHT, frame.y(at))], cls="f0 k-red", width=3))
-        body.append(text(LEFT + 6, frame.y(at) - 6, words, cls="halo tb"))
+        body += frame.limit(words, at)
     for words, x, y in marks:
-        body += _mark(words, frame.x(x), frame.y(y))
-    return drawing(WIDTH, HEIGHT, told["words"], body)
+        body += _mark(words, frame.x(x), frame.y(y), left=frame.x(x) > WIDE.width * 0.6)
+    return drawing(WIDE.width, WIDE.height, told["words"], body)
 
 
-def _mark(words: str, x: float, y: float) -> list[str]:
-    left = x > WIDTH * 0.6
+def _mark(words: str, x: float, y: float, *, left: bool) -> list[str]:
     return [
         tag("circle", cls="fi k-ink", cx=x, cy=y, r=5.0),
         text(x - 10 if left else x + 10, y + 16, words, anchor="end" if left else "start", cls="halo tb"),
@@ -85,22 +117,27 @@ def _mark(words: str, x: float, y: float) -> list[str]:
 
 
 def bar_chart(
-    bars: Sequence[tuple[str, float]], *, y_label: str, title: str, limits: Sequence[tuple[str, float]] = ()
+    bars: Sequence[tuple[str, float]],
+    *,
+    y_label: str,
+    title: str,
+    limits: Sequence[tuple[str, float]] = (),
+    sheet: Sheet = WIDE,
 ) -> str:
-    """Return bars from zero with their values; the axis is never cut short."""
+    """Return bars from zero with their values; the axis is never cut short. A bar without a name stays without."""
     values = [value for _, value in bars] + [at for _, at in limits] or [0.0]
-    frame = Frame([0, 1], [0.0, *values])
+    frame = Frame([0, 1], [0.0, *values], sheet)
     body = frame.axes("", y_label, bars=True)
-    step = (WIDTH - LEFT - RIGHT) / max(len(bars), 1)
-    every = max(1, len(bars) // 12)
+    step = (sheet.end - sheet.left) / max(len(bars), 1)
+    names = [name for name, _ in bars if name]
+    every = max(1, len(names) // 12)
     for place, (name, value) in enumerate(bars):
-        x, top, foot = LEFT + step * (place + 0.18), frame.y(max(value, 0)), frame.y(min(value, 0))
+        x, top, foot = sheet.left + step * (place + 0.18), frame.y(max(value, 0)), frame.y(min(value, 0))
         body.append(tag("rect", cls="fb", x=x, y=top, width=step * 0.64, height=max(foot - top, 0.0)))
         if len(bars) <= 14:
             body.append(text(x + step * 0.32, top - 5, label(round(value, 1)), anchor="middle"))
-        if place % every == 0:
-            body.append(text(x + step * 0.32, HEIGHT - BOTTOM + 20, name[:14], anchor="middle", cls="t2"))
+        if name and place % every == 0:
+            body.append(text(x + step * 0.32, sheet.foot + 18, name[:14], anchor="middle", cls="t2"))
     for words, at in limits:
-        body.append(path([(LEFT, frame.y(at)), (WIDTH - RIGHT, frame.y(at))], cls="f0 k-red", width=3))
-        body.append(text(WIDTH - RIGHT - 4, frame.y(at) - 6, words, anchor="end", cls="halo tb"))
-    return drawing(WIDTH, HEIGHT, title, body)
+        body += frame.limit(words, at, at_end=True)
+    return drawing(sheet.width, sheet.height, title, body, cls=sheet.cls)

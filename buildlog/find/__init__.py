@@ -1,0 +1,1 @@
+"""Finding things in the record of one aircraft, and reading its history."""
