@@ -3,10 +3,11 @@
 from typing import Self
 
 from django.db import models
+from django.db.models import Exists, OuterRef
 
 from buildlog.aircraft.models import Aircraft, User
 from buildlog.files.models import Document, Photo
-from buildlog.ledger.models import Record
+from buildlog.ledger.models import Record, Withdrawal
 
 
 class Instrument(Record):
@@ -52,8 +53,8 @@ class ReadingQuery(models.QuerySet["Reading"]):
     """Words to ask for readings."""
 
     def current(self) -> Self:
-        """Return the readings that no later reading corrects."""
-        return self.filter(amended_by=None)
+        """Return the readings that no later reading corrects and nobody withdrew."""
+        return self.filter(amended_by=None).exclude(Exists(Withdrawal.objects.filter(subject=OuterRef("id"))))
 
 
 class Reading(Record):

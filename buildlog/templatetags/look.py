@@ -37,6 +37,7 @@ STATES = {
     "undecided": ("Undecided: measured too coarsely", "missing", "missing"),
     "no-verdict": ("No verdict: limit unverified", "missing", "missing"),
     "no-limits": ("No limits given", "na", "na"),
+    "not-measured": ("Not measured", "todo", "open"),
     "does-not-count": ("Does not count", "na", "na"),
     "squawk": ("Open squawk", "squawk", "squawk"),
     "cleared": ("Cleared", "done", "done"),

@@ -23,6 +23,16 @@ def jpeg(*, size: tuple[int, int] = (640, 480), taken: str = "2026:03:14 10:05:0
     return out.getvalue()
 
 
+def shop_jpeg(size: tuple[int, int] = (4000, 3000), quality: int = 88) -> bytes:
+    """Return a JPEG as large as a phone's: edges, shades and grain."""
+    small = Image.frombytes("RGB", (size[0] // 50, size[1] // 50), random.randbytes(size[0] // 50 * (size[1] // 50) * 3))
+    shades = small.resize(size, Image.Resampling.BICUBIC)
+    grain = Image.effect_noise(size, 18).convert("RGB")
+    out = io.BytesIO()
+    Image.blend(shades, grain, 0.35).save(out, "JPEG", quality=quality)
+    return out.getvalue()
+
+
 def upload(content: bytes, name: str = "IMG_1.jpg") -> SimpleUploadedFile:
     """Return bytes as they come from a form."""
     return SimpleUploadedFile(name, content)
