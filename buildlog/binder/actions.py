@@ -18,7 +18,7 @@ from buildlog.errors import Refused
 from buildlog.files.actions import keep_document
 from buildlog.files.models import Document
 from buildlog.ledger import actions as ledger
-from buildlog.ledger.queries import head
+from buildlog.ledger.queries import head, sent_before
 
 NO_LIBRARIES = (
     "This machine lacks the libraries that printing needs. The record is complete without them; the host installs "
@@ -53,10 +53,8 @@ def begin_issue(
     at: dt.datetime | None = None,
 ) -> BinderIssue:
     """Record that a binder was asked for, as of the present ledger head."""
-    if earlier := BinderIssue.objects.filter(id=client_id).first():
-        if earlier.aircraft_id != aircraft.id:
-            raise Refused("This form was used before. Open it anew.")
-        return earlier
+    if first := sent_before(BinderIssue, client_id, aircraft):
+        return first
     now = at or timezone.now()
     last = aircraft.binders.aggregate(last=Max("number"))["last"] or 0
     as_of = head(aircraft)

@@ -13,6 +13,7 @@ from buildlog.aircraft.models import Aircraft, User
 from buildlog.calcs.models import Snapshot, SnapshotInput
 from buildlog.errors import Refused
 from buildlog.ledger import actions as ledger
+from buildlog.ledger.queries import sent_before
 from buildlog.methods.catalogue import methods
 from buildlog.methods.result import VERDICT_WORDS
 from buildlog.methods.run import run
@@ -47,10 +48,8 @@ def take_snapshot(
     sources: inputs bound to outputs of other snapshots. holds_for: the parts this run speaks of, in their positions.
     Raises Refused at the field of an input that cannot be read.
     """
-    if sent_before := Snapshot.objects.filter(id=client_id).first():
-        if sent_before.aircraft_id != aircraft.id:
-            raise Refused("This form was used before. Open it anew.")
-        return sent_before
+    if first := sent_before(Snapshot, client_id, aircraft):
+        return first
     result = run(methods()[method], given)
     try:
         with transaction.atomic():

@@ -1,8 +1,10 @@
 """Keeping photos and documents: bytes first, then one transaction with their rows and event."""
 
 import datetime as dt
+from dataclasses import dataclass
 from pathlib import Path
 from typing import Protocol
+from uuid import UUID
 
 from django.db import transaction
 from django.utils import timezone
@@ -14,6 +16,8 @@ from buildlog.files.faults import point
 from buildlog.files.inspect import Seen
 from buildlog.files.models import Blob, Document, Photo
 from buildlog.ledger import actions as ledger
+from buildlog.ledger.ids import uuid7
+from buildlog.ledger.queries import sent_before
 
 PHOTO_MOST, DOCUMENT_MOST = 40 << 20, 25 << 20
 
@@ -40,6 +44,8 @@ def store_photo(
 
     Raises Refused at `photos` with a sentence when it is empty, too large, or no picture that can be read whole.
     """
+    if taken_on and taken_on > timezone.localdate(at) + dt.timedelta(days=1):
+        raise Refused("A photo cannot have been taken on a day to come.", field="taken_on")
     part = store.receive(upload.chunks(), most=PHOTO_MOST, field="photos")  # type: ignore[arg-type]
     try:
         seen = derived.make(part.path, part.sha256, field="photos")
@@ -118,24 +124,40 @@ def describe_photo(
     return photo
 
 
+@dataclass(frozen=True)
+class Paper:
+    """What is said of a document: the columns of its row."""
+
+    id: UUID
+    kind: str
+    title: str
+    number: str
+    dated_on: dt.date | None
+    name: str
+
+
 def store_document(
     *,
     aircraft: Aircraft,
     by: User,
     upload: Upload,
+    client_id: UUID,
     kind: str,
     title: str,
     number: str = "",
     dated_on: dt.date | None = None,
     at: dt.datetime | None = None,
 ) -> Document:
-    """Keep one PDF as it is; Refused at `upload` when it is none, or over 25 MB."""
+    """Keep one PDF as it is, once however often it is sent; Refused at `upload` when it is none, or too large."""
+    if first := sent_before(Document, client_id, aircraft):
+        return first
     part = store.receive(upload.chunks(), most=DOCUMENT_MOST, field="upload")  # type: ignore[arg-type]
     with part.path.open("rb") as file:
         if not file.read(8).startswith(b"%PDF-"):
             store.drop(part)
             raise Refused("A document is a PDF file. A photographed page goes in as a photo.", field="upload")
-    return _document(aircraft, by, part, kind, title, number, dated_on, (upload.name or "")[:255], at)
+    said = Paper(client_id, kind, title, number, dated_on, (upload.name or "")[:255])
+    return _document(aircraft, by, part, said, at)
 
 
 def keep_document(
@@ -144,35 +166,21 @@ def keep_document(
     """Keep a file that this program made, such as a binder."""
     with file.open("rb") as opened:
         part = store.receive(iter(lambda: opened.read(store.CHUNK), b""), most=2 << 30, field="file")
-    return _document(aircraft, by, part, kind, title, number, dated_on, file.name, None)
+    return _document(aircraft, by, part, Paper(uuid7(), kind, title, number, dated_on, file.name), None)
 
 
 def _document(
     aircraft: Aircraft,
     by: User,
     part: store.Part,
-    kind: str,
-    title: str,
-    number: str,
-    dated_on: dt.date | None,
-    name: str,
+    said: Paper,
     at: dt.datetime | None,
 ) -> Document:
     store.keep(part)
     now = at or timezone.now()
     with transaction.atomic():
         blob, is_new = _blob(part, "application/pdf", now)
-        document = Document.objects.create(
-            aircraft=aircraft,
-            blob=blob,
-            kind=kind,
-            title=title,
-            number=number,
-            dated_on=dated_on,
-            name=name,
-            added_by=by,
-            added_at=now,
-        )
-        rows, text = ([blob] if is_new else []), f"added document {title[:80]}"
+        document = Document.objects.create(aircraft=aircraft, blob=blob, added_by=by, added_at=now, **vars(said))
+        rows, text = ([blob] if is_new else []), f"added document {said.title[:80]}"
         ledger.write(aircraft=aircraft, by=by, kind="document.added", about=document, rows=rows, text=text, at=at)
     return document

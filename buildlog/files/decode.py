@@ -14,6 +14,7 @@ from typing import Any
 from PIL import Image, ImageOps
 
 MEMORY = 2**30
+DERIVATIVE = 16 << 20  # bytes of one written file: far more than a derivative of 1600 pixels needs
 PIXELS, SIDE = 80_000_000, 20_000
 SIZES = (1600, 1000, 320)
 ORIENTATION, MAKE, MODEL, EXIF, TAKEN, DIGITIZED = 0x0112, 0x010F, 0x0110, 0x8769, 0x9003, 0x9004
@@ -96,6 +97,7 @@ def main(path: str, folder: str) -> None:
     """Say what was seen, or why it is refused, as JSON."""
     resource.setrlimit(resource.RLIMIT_AS, (MEMORY, MEMORY))
     resource.setrlimit(resource.RLIMIT_CORE, (0, 0))
+    resource.setrlimit(resource.RLIMIT_FSIZE, (DERIVATIVE, DERIVATIVE))
     Image.MAX_IMAGE_PIXELS = PIXELS
     warnings.simplefilter("error", Image.DecompressionBombWarning)
     try:

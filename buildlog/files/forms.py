@@ -2,7 +2,7 @@
 
 from collections.abc import Sequence
 from typing import Any
-from uuid import UUID
+from uuid import UUID, uuid4
 
 from django import forms
 from django.core.files.uploadedfile import UploadedFile
@@ -34,6 +34,7 @@ class PhotosForm(forms.Form):
 class DocumentForm(forms.Form):
     """A paper as a PDF file."""
 
+    client_id = forms.UUIDField(widget=forms.HiddenInput, initial=uuid4)
     kind = forms.ChoiceField(label="What it is", choices=[row for row in Document.Kind.choices if row[0] != "binder"])
     title = PlainText(label="Title", max_length=200)
     number = PlainText(label="Number on it", max_length=80, required=False)

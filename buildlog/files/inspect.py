@@ -14,7 +14,7 @@ from django.conf import settings
 
 from buildlog.errors import Refused
 
-SECONDS = 20
+SECONDS = 10
 NOT_READABLE = "This picture could not be read whole. Take it again, or choose the original from the camera."
 
 

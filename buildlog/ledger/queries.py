@@ -1,11 +1,15 @@
 """Reading the ledger: heads, and the trail of a record."""
 
 from dataclasses import dataclass
+from typing import TypeVar
 from uuid import UUID
 
+from buildlog.errors import Refused
 from buildlog.ledger.actions import said
 from buildlog.ledger.ids import HasId
-from buildlog.ledger.models import Event
+from buildlog.ledger.models import Event, Record
+
+Row = TypeVar("Row", bound=Record)
 
 
 @dataclass(frozen=True)
@@ -33,6 +37,17 @@ class Told:
     subject: UUID | None
     text: str
     hash: str
+
+
+def sent_before(model: type[Row], client_id: UUID, aircraft: HasId) -> Row | None:
+    """Return the row that an earlier sending of the same form made, or None.
+
+    Raises Refused when the identifier belongs to a row of another aircraft.
+    """
+    row = model._default_manager.filter(pk=client_id).first()
+    if row is not None and row.aircraft_id != aircraft.id:  # type: ignore[attr-defined]
+        raise Refused("This form was used before, for something else. Open it anew.")
+    return row
 
 
 def head(aircraft: HasId) -> Head:

@@ -12,13 +12,14 @@ from buildlog.errors import Refused
 from buildlog.files.models import Document, Photo
 from buildlog.ledger import actions as ledger
 from buildlog.ledger.models import Record
+from buildlog.ledger.queries import sent_before
 from buildlog.parts.models import Batch, Installation, Part, PartBatch, PartDocument, PartPhoto
 
 
 def add_batch(*, aircraft: Aircraft, by: User, client_id: UUID, at: dt.datetime | None = None, **said: Any) -> Batch:
     """Book in a lot of material: code, material, specification, lot, supplier, quantity, dates, certificate."""
-    if sent_before := Batch.objects.filter(id=client_id, aircraft=aircraft).first():
-        return sent_before
+    if first := sent_before(Batch, client_id, aircraft):
+        return first
     if (said.get("expires_on") and said.get("received_on")) and said["expires_on"] < said["received_on"]:
         raise Refused("This batch would have expired before it was received.", field="expires_on")
     try:
@@ -43,8 +44,8 @@ def add_part(
     **said: Any,
 ) -> Part:
     """Enter a part with its origin, and the batches, papers and photos that belong to it."""
-    if sent_before := Part.objects.filter(id=client_id, aircraft=aircraft).first():
-        return sent_before
+    if first := sent_before(Part, client_id, aircraft):
+        return first
     part = Part.objects.create(id=client_id, aircraft=aircraft, added_by=by, added_at=at or timezone.now(), **said)
     rows = _join(part, batches, documents, photos)
     text = f"entered part {part}, {part.get_origin_display().lower()}"

@@ -13,6 +13,7 @@ from buildlog.aircraft.roles import Role
 from buildlog.errors import Refused
 from buildlog.files.models import Photo
 from buildlog.ledger import actions as ledger
+from buildlog.ledger.queries import sent_before
 from buildlog.methods import units
 from buildlog.readings.limits import check_uncertainty, day, expanded, verdict_of
 from buildlog.readings.models import Characteristic, Instrument, Reading
@@ -29,10 +30,8 @@ def add_instrument(
 
     said: code, title, uncertainty ("0.5 kg", expanded, k = 2), calibrated_on, due_on, certificate.
     """
-    if sent_before := Instrument.objects.filter(id=client_id).first():
-        if sent_before.aircraft_id != aircraft.id:
-            raise Refused(TAKEN)
-        return sent_before
+    if first := sent_before(Instrument, client_id, aircraft):
+        return first
     _check_instrument(aircraft, said, at or timezone.now())
     row = Instrument.objects.create(id=client_id, aircraft=aircraft, **said)
     until = f", calibrated until {row.due_on}" if row.due_on else ""
@@ -82,10 +81,8 @@ def add_characteristic(
 
     said: code, title, unit, plan_sheet, and nominal, lower, upper as typed (kept as decimals in `unit`).
     """
-    if sent_before := Characteristic.objects.filter(id=client_id).first():
-        if sent_before.aircraft_id != aircraft.id:
-            raise Refused(TAKEN)
-        return sent_before
+    if first := sent_before(Characteristic, client_id, aircraft):
+        return first
     said = _checked(aircraft, said)
     row = Characteristic.objects.create(id=client_id, aircraft=aircraft, **said)
     text = f"declared characteristic {row}: {limit_words(row)}"

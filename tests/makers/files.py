@@ -2,6 +2,8 @@
 
 import io
 import random
+from typing import Any
+from uuid import uuid4
 
 from django.core.files.uploadedfile import SimpleUploadedFile
 from PIL import Image
@@ -25,7 +27,9 @@ def jpeg(*, size: tuple[int, int] = (640, 480), taken: str = "2026:03:14 10:05:0
 
 def shop_jpeg(size: tuple[int, int] = (4000, 3000), quality: int = 88) -> bytes:
     """Return a JPEG as large as a phone's: edges, shades and grain."""
-    small = Image.frombytes("RGB", (size[0] // 50, size[1] // 50), random.randbytes(size[0] // 50 * (size[1] // 50) * 3))
+    small = Image.frombytes(
+        "RGB", (size[0] // 50, size[1] // 50), random.randbytes(size[0] // 50 * (size[1] // 50) * 3)
+    )
     shades = small.resize(size, Image.Resampling.BICUBIC)
     grain = Image.effect_noise(size, 18).convert("RGB")
     out = io.BytesIO()
@@ -38,17 +42,19 @@ def upload(content: bytes, name: str = "IMG_1.jpg") -> SimpleUploadedFile:
     return SimpleUploadedFile(name, content)
 
 
-def photo(*, aircraft: Aircraft, by: User | None = None, content: bytes | None = None, caption: str = "") -> Photo:
+def photo(*, aircraft: Aircraft, by: User | None = None, content: bytes | None = None, **more: Any) -> Photo:
     """Return a kept photo."""
     by = by or make.builder_of(aircraft)
-    return actions.store_photo(aircraft=aircraft, by=by, upload=upload(content or jpeg()), caption=caption)
+    return actions.store_photo(aircraft=aircraft, by=by, upload=upload(content or jpeg()), **more)
 
 
 def document(*, aircraft: Aircraft, title: str = "Invoice", content: bytes = b"%PDF-1.7\n%%EOF") -> Document:
     """Return a kept document."""
     by = make.builder_of(aircraft)
     paper = upload(content + random.randbytes(8).hex().encode(), "paper.pdf")
-    return actions.store_document(aircraft=aircraft, by=by, upload=paper, kind="invoice", title=title)
+    return actions.store_document(
+        aircraft=aircraft, by=by, upload=paper, client_id=uuid4(), kind="invoice", title=title
+    )
 
 
 ARGUMENTS = {

@@ -4,6 +4,7 @@ import datetime as dt
 
 import pytest
 from axe_playwright_python.sync_playwright import Axe
+from django.urls import reverse
 from playwright.sync_api import sync_playwright
 
 from buildlog.parts.actions import install_part
@@ -13,11 +14,15 @@ from tests import make
 from tests.makers.calcs import snapshot
 from tests.makers.files import jpeg, photo
 from tests.makers.parts import batch, part
+from tests.makers.readings import characteristic, reading
 from tests.makers.shop import entry, task
 
 pytestmark = [pytest.mark.browser, pytest.mark.django_db(transaction=True)]
-PAGES = ("bench", "log", "entries", "tasks", "photos", "parts", "batches", "documents", "calculations", "binders")
-ADDRESSES = {"bench": "", "log": "log/"}
+PAGES = (
+    *("bench", "entry-add", "entries", "tasks", "task-add", "photos", "parts", "part-add", "batches", "documents"),
+    *("readings", "characteristic-add", "instruments", "instrument-add", "calculations", "conversion"),
+    *("binders", "binder-print", "aircraft-page", "find", "recent-changes", "people"),
+)
 
 
 @pytest.fixture
@@ -40,6 +45,7 @@ def aircraft(transactional_db):
     where = {"position": "carburettor", "installed_on": dt.date(2026, 5, 9)}
     install_part(aircraft=row, by=make.builder_of(row), part=part(aircraft=row), **where)
     snapshot(aircraft=row)
+    reading(characteristic=characteristic(aircraft=row))
     return row
 
 
@@ -78,7 +84,7 @@ def test_no_page_fails_axe_or_scrolls_sideways(live_server, chromium, aircraft, 
     for name in PAGES:
         for width in (320, 390, 1280):
             page.set_viewport_size({"width": width, "height": 800})
-            page.goto(f"{live_server.url}/a/{aircraft.id}/{ADDRESSES.get(name, name + '/')}")
+            page.goto(live_server.url + reverse(name, args=[aircraft.id]))
             found = Axe().run(page).response["violations"]
             faults += [(name, width, one["id"], one["nodes"][0]["html"][:120]) for one in found]
             if page.evaluate("document.documentElement.scrollWidth") > width:

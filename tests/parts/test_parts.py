@@ -82,6 +82,19 @@ def test_installing_from_the_page_asks_for_the_position_in_words(aircraft, clien
     assert b"Tail light" in client.get(reverse("parts", args=[aircraft.id])).content
 
 
+def test_a_form_of_another_aircraft_is_refused_in_a_sentence(aircraft, client):
+    sent = make.client_id()
+    post = {"client_id": sent, "number": "1", "name": "Rib", "origin": "made-here", "inspection": "accepted"}
+    batch_post = {"client_id": make.client_id(), "code": "B", "material": "Spruce"}
+    other = make.aircraft()
+    for row, wanted in ((other, 303), (aircraft, 422)):
+        client.force_login(make.builder_of(row))
+        assert client.post(reverse("part-add", args=[row.id]), post).status_code == wanted
+        answer = client.post(reverse("batch-add", args=[row.id]), batch_post)
+        assert answer.status_code == wanted
+    assert b"This form was used before" in answer.content
+
+
 def test_a_helper_looks_but_does_not_enter_parts(aircraft, client):
     helper = make.user()
     make.member(aircraft=aircraft, user=helper, role="helper")

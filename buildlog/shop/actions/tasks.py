@@ -9,6 +9,7 @@ from django.db import IntegrityError, transaction
 from buildlog.aircraft.models import Aircraft, User
 from buildlog.errors import Refused
 from buildlog.ledger import actions as ledger
+from buildlog.ledger.queries import sent_before
 from buildlog.shop.models import Task
 
 TAKEN = "There is a task with this number."
@@ -16,8 +17,8 @@ TAKEN = "There is a task with this number."
 
 def add_task(*, aircraft: Aircraft, by: User, client_id: UUID, at: dt.datetime | None = None, **said: Any) -> Task:
     """Plan a task: section, number, title, kind, plan sheet and revision, planned minutes, zone."""
-    if sent_before := Task.objects.filter(id=client_id, aircraft=aircraft).first():
-        return sent_before
+    if first := sent_before(Task, client_id, aircraft):
+        return first
     try:
         with transaction.atomic():
             task = Task.objects.create(id=client_id, aircraft=aircraft, place=aircraft.tasks.count(), **said)
