@@ -10,6 +10,8 @@ from buildlog.conformity.models import Squawk
 from buildlog.methods.result import OUTSIDE, UNDECIDED
 from buildlog.parts.models import Installation, Part
 from buildlog.profiles import load
+from buildlog.readings.limits import NOT_MEASURED
+from buildlog.readings.queries import Present, presents
 from buildlog.shop.models import Entry
 
 
@@ -29,11 +31,14 @@ def gaps(aircraft: Aircraft, on: dt.date) -> list[Gap]:
     runs = [view for view in snapshot_views(aircraft) if not view.is_superseded]
     drafts = Entry.objects.filter(aircraft=aircraft).drafts().select_related("author").order_by("worked_on")
     waiting = [row for row in installed if row.part.inspection == Part.Inspection.WAITING]
+    measured = presents(aircraft)
     late = [str(row) for row in aircraft.batches.filter(expires_on__lt=on)]
     found = [
         Gap("Checks of the conversion without evidence", _checks(aircraft), "conversion"),
         Gap("Calculations that came out of limits", _said(runs, {OUTSIDE, UNDECIDED}), "calculations"),
         Gap("Calculations that are stale", tuple(str(v.snapshot) for v in runs if v.path), "calculations"),
+        Gap("Readings out of limits or undecided", _measured(measured, {"outside", "undecided"}), "readings"),
+        Gap("Characteristics not measured", _measured(measured, {NOT_MEASURED}), "readings"),
         Gap("Parts of unknown origin", tuple(str(row) for row in parts if row.origin == Part.Origin.UNKNOWN), "parts"),
         Gap("Parts installed without receiving inspection", tuple(str(row.part) for row in waiting), "parts"),
         Gap("Batches past their expiry", tuple(late), "batches"),
@@ -43,6 +48,10 @@ def gaps(aircraft: Aircraft, on: dt.date) -> list[Gap]:
         Gap("No weighing is on the record", _unweighed(aircraft), "weight-and-balance"),
     ]
     return [gap for gap in found if gap.which]
+
+
+def _measured(rows: list[Present], states: set[str]) -> tuple[str, ...]:
+    return tuple(str(row.characteristic) for row in rows if row.state in states)
 
 
 def _said(runs: list[SnapshotView], verdicts: set[str]) -> tuple[str, ...]:

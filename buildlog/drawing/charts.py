@@ -34,7 +34,7 @@ class Sheet:
 
 
 WIDE = Sheet(640.0, 340.0, 70.0, 24.0, 26.0, 52.0)
-SNUG = Sheet(320.0, 190.0, 30.0, 4.0, 24.0, 26.0, "plot snug")  # beside text, in a column of a page
+SNUG = Sheet(320.0, 190.0, 40.0, 4.0, 24.0, 26.0, "plot snug")  # beside text, in a column of a page
 
 
 class Frame:

@@ -98,9 +98,28 @@ def present_page(
 
 def readings_of(characteristic: Characteristic) -> list[ReadingView]:
     """Return all readings of a characteristic, newest first, the corrected and withdrawn ones among them."""
-    rows = list(characteristic.readings.select_related("instrument", "read_by", "photo"))
+    return _told(list(characteristic.readings.select_related("instrument", "read_by", "photo")), characteristic)
+
+
+def every_reading(aircraft: Aircraft) -> list[tuple[Characteristic, list[ReadingView]]]:
+    """Return every characteristic with all its readings, oldest first, in a fixed number of queries."""
+    rows = Reading.objects.filter(characteristic__aircraft=aircraft).select_related("instrument", "read_by", "photo")
+    found: dict[UUID, list[Reading]] = {}
+    for row in rows.order_by("read_on", "recorded_at"):
+        found.setdefault(row.characteristic_id, []).append(row)
+    taken_back = _taken_back(aircraft.id)
+    return [(one, _told(found.get(one.id, []), one, taken_back)) for one in aircraft.characteristics.all()]
+
+
+def _taken_back(chain: UUID) -> dict[UUID, str]:
+    return dict(Withdrawal.objects.filter(chain=chain).values_list("subject", "reason"))
+
+
+def _told(
+    rows: list[Reading], characteristic: Characteristic, taken_back: dict[UUID, str] | None = None
+) -> list[ReadingView]:
     corrections = {row.amends_id: row for row in rows if row.amends_id}
-    taken_back = dict(Withdrawal.objects.filter(subject__in=[row.id for row in rows]).values_list("subject", "reason"))
+    taken_back = _taken_back(characteristic.aircraft_id) if taken_back is None else taken_back
     return [
         ReadingView(
             row,

@@ -22,6 +22,7 @@ from tests.makers.binder import issue
 from tests.makers.calcs import snapshot
 from tests.makers.files import photo
 from tests.makers.parts import part
+from tests.makers.readings import characteristic, reading
 from tests.makers.shop import draft, entry, task
 
 
@@ -36,6 +37,7 @@ def aircraft(transactional_db):
     shop.amend_entry(aircraft=row, by=make.builder_of(row), entry=first, **more)
     part(aircraft=row, name="Carburettor", serial="C-118", origin="unknown")
     snapshot(aircraft=row, label="static run")
+    reading(characteristic=characteristic(aircraft=row, title="Hub seat diameter"), entered="25.31")
     return row
 
 
@@ -75,6 +77,9 @@ def test_a_printed_binder_holds_what_the_record_says(aircraft, paper):
         "Parts of unknown origin",
         "47.65",
         "static run",
+        "Hub seat diameter",
+        "25.31",
+        "Readings out of limits",
     ):
         assert wanted in words, wanted
     assert " safe" not in words and "airworthy" not in words
