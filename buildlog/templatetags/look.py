@@ -98,6 +98,12 @@ def unit(spelled: str) -> str:
 
 
 @register.filter
+def figures(recorded: str) -> str:
+    """Return a recorded number with five significant figures; the record itself keeps twelve."""
+    return units.decimal(float(f"{float(recorded):.5g}")) if recorded else ""
+
+
+@register.filter
 def position(key: str) -> str:
     """Return a position in words: a declared one's title, or the builder's own words."""
     declared = load.positions().get(key)

@@ -68,6 +68,8 @@ ACTS_BY_HAND = {
 }
 
 
+# Pages whose address names a word that is the same for every aircraft.
+NAMES_NO_ROW = {"calculation-run"}
 # Pages that a role may call, but on rows of its own only; the rows of the walk are the builder's.
 ON_OWN_ROWS = {"entry-edit": {"helper", "assist", "inspector"}, "photo-original": {"helper", "assist"}}
 
@@ -193,7 +195,8 @@ def test_rows_of_another_aircraft_are_not_found(site, page):
     theirs = make.aircraft()
     ids = {word: value for word, value in _rows(page, theirs).items() if isinstance(value, UUID)}
     if not ids:
-        pytest.skip("its address names no row, only a word of the profiles")
+        assert page.name in NAMES_NO_ROW
+        return
     values = _rows(page, site.aircraft) | ids
     url = reverse(page.name, kwargs=values | {"aircraft_id": site.aircraft.id})
     for role in MEMBERS:
